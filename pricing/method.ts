@@ -1,0 +1,55 @@
+import type {
+  Contract,
+  Market,
+  MethodName,
+  MethodSettings,
+  PricingResult,
+} from '@/pricing/contract';
+
+/** The settings of a method without its name; a size that a method does not use is absent. */
+export type MethodSizes = Omit<MethodSettings, 'name'>;
+
+/**
+ * What a numerical method gives, and what its implementer promises. A method is one file in
+ * `methods/` and one line in `registry.ts`; everything that lists methods reads the registry, and
+ * the conformance suite (`tests/pricing/conformance.test.ts`) holds each entry to these points.
+ *
+ *  1. `prices` answers from the contract and the market alone, and never throws. Where it says
+ *     no, `price` returns the failure `method-does-not-price`, with a sentence that names what.
+ *  2. `price` is given a request that `checkRequest` has accepted: finite numbers, positive spot,
+ *     strike, expiry and volatility, settings within the caps. It does not check those again.
+ *  3. `price` returns finite numbers or a failure value. Never NaN or Infinity, never a silent
+ *     repair of the input; what cannot be computed is a failure with a code and advice.
+ *  4. Same inputs, same 64 bits, in every engine: no clock, no random source without a seed, no
+ *     state kept between calls, sums in a fixed order, and of functions only `+ - * / sqrt` and
+ *     those of `numerics/elementary.ts`.
+ *  5. A setting left out takes the value of `defaultSettings`; the result reports every setting
+ *     that was really used, so that the number can be made again from the result alone.
+ *  6. `errorEstimate` is absolute, in the unit of the value, and honest per method and family: at
+ *     least the true error in 95 % of cases, and at most thirty times it in 80 % of the cases
+ *     whose true error exceeds ten times rounding. It is null only where none can be given.
+ *  7. All the Greeks of `contract.ts` come with the value, in the units of `conventions.ts`, from
+ *     the method itself where it can give them; a Greek got by revaluing a bumped market says so
+ *     in a warning.
+ *  8. A warning has a code and one sentence for the person who reads the number. Diagnostics are
+ *     finite numbers under fixed names.
+ *  9. `machinery` names what a wrong number could come from, in words shared by all methods. Two
+ *     routes whose machinery is the same do not check each other (`verdict.ts`).
+ * 10. `summary` is read by users: what it does, when to use it, where it is weak.
+ * 11. `work` counts the node updates of one value at given settings; it only has to order the
+ *     methods and sizes by cost, so that a tolerance is met in the cheapest way.
+ */
+export type Method = {
+  name: MethodName;
+  label: string;
+  summary: string;
+  /** Order in the step of space (grids) or in the reciprocal of steps (walks); null: exact. */
+  theoreticalOrder: number | null;
+  machinery: readonly string[];
+  defaultSettings: MethodSizes;
+  /** Where a search for a tolerance starts; it doubles every size until one holds or a cap ends it. */
+  coarsestSettings: MethodSizes;
+  prices: (contract: Contract, market: Market) => boolean;
+  work: (settings: MethodSizes) => number;
+  price: (contract: Contract, market: Market, settings: MethodSizes) => PricingResult;
+};
