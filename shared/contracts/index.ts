@@ -1,0 +1,29 @@
+/** Every endpoint there is, by name: routes, OpenAPI and the role test are driven by this list. */
+import * as health from './health';
+import * as people from './people';
+import * as quotes from './quotes';
+import * as sessions from './sessions';
+import * as underlyings from './underlyings';
+import type { Endpoint } from '../endpoint';
+
+export const endpoints = {
+  getHealth: health.getHealth,
+  signIn: sessions.signIn,
+  refreshSession: sessions.refreshSession,
+  signOut: sessions.signOut,
+  stepUp: sessions.stepUp,
+  getMe: sessions.getMe,
+  listMembers: people.listMembers,
+  setRole: people.setRole,
+  changePermission: people.changePermission,
+  endPermissionChange: people.endPermissionChange,
+  suspendMember: people.suspendMember,
+  reinstateMember: people.reinstateMember,
+  listAccessEvents: people.listAccessEvents,
+  listUnderlyings: underlyings.listUnderlyings,
+  createQuote: quotes.createQuote,
+  listQuotes: quotes.listQuotes,
+  getQuote: quotes.getQuote,
+} satisfies Record<string, Endpoint>;
+
+export type EndpointName = keyof typeof endpoints;
