@@ -7,6 +7,8 @@
  * per one unit of the underlying in the quote currency.
  */
 
+export { yearFraction } from '@/pricing/conventions';
+
 export const optionKinds = ['call', 'put'] as const;
 export type OptionKind = (typeof optionKinds)[number];
 
