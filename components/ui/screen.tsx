@@ -1,0 +1,63 @@
+import { useEffect, type ReactNode } from 'react';
+import { StyleSheet, View } from 'react-native';
+import { uiText } from '@/constants/texts/ui';
+import { color, space } from '@/constants/theme';
+import { Heading, Text } from './text';
+import { useWide } from './use-wide';
+
+export type ScreenProps = {
+  title: string;
+  /** One quiet line above the heading: where this belongs. */
+  overline?: ReactNode;
+  subtitle?: ReactNode;
+  /** Buttons at the right of the heading. */
+  actions?: ReactNode;
+  /** Widest measure of the content on a wide window. */
+  measure?: number;
+  children: ReactNode;
+};
+
+/** A page: the main landmark with its heading, which also names the browser's tab. */
+export function Screen(props: ScreenProps) {
+  const { title, overline, subtitle, actions, measure = 1180, children } = props;
+  const wide = useWide();
+  useEffect(() => {
+    document.title = `${title} · ${uiText.product}`;
+  }, [title]);
+  return (
+    <View role="main" nativeID="content" tabIndex={-1} style={[styles.main, wide && styles.wide]}>
+      <View style={[styles.column, { maxWidth: measure }]}>
+        <View style={styles.head}>
+          <View style={styles.words}>
+            {typeof overline === 'string' ? (
+              <Text size="small" tone="muted">
+                {overline}
+              </Text>
+            ) : (
+              overline
+            )}
+            <Heading level={1}>{title}</Heading>
+            {typeof subtitle === 'string' ? <Text tone="muted">{subtitle}</Text> : subtitle}
+          </View>
+          {actions ? <View style={styles.actions}>{actions}</View> : null}
+        </View>
+        {children}
+      </View>
+    </View>
+  );
+}
+
+const styles = StyleSheet.create({
+  main: { flexGrow: 1, padding: space.md, paddingBottom: space.xl, backgroundColor: color.ground },
+  wide: { padding: space.xl, paddingTop: space.xl },
+  column: { width: '100%', gap: space.lg },
+  head: {
+    flexDirection: 'row',
+    flexWrap: 'wrap',
+    alignItems: 'flex-end',
+    justifyContent: 'space-between',
+    gap: space.md,
+  },
+  words: { flexShrink: 1, gap: 2 },
+  actions: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', gap: space.sm },
+});

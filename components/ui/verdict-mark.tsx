@@ -1,0 +1,82 @@
+import { StyleSheet, View } from 'react-native';
+import Svg, { Circle, Path } from 'react-native-svg';
+import type { Verdict } from '@/pricing/contract';
+import { color, radius, space } from '@/constants/theme';
+import { uiText } from '@/constants/texts/ui';
+import { Text, type Tone } from './text';
+
+export const verdictTone: Record<Verdict, Tone> = {
+  agree: 'moss',
+  wide: 'ochre',
+  disagree: 'brick',
+  'one-route': 'muted',
+};
+
+/** Level, bowed, crossing or single lines: each verdict has its own shape beside its colour. */
+const lines: Record<Verdict, string[]> = {
+  agree: ['M5.6 6.2h6.8', 'M5.6 9h6.8', 'M5.6 11.8h6.8'],
+  wide: ['M5.2 7.6C7.6 5 10.4 5 12.8 7.6', 'M5.2 10.400C7.6 13 10.4 13 12.8 10.4'],
+  disagree: ['M5.4 12.2 12.6 5.8', 'M5.4 5.8 12.6 12.2'],
+  'one-route': ['M5.6 9h6.8'],
+};
+
+export function VerdictShape({ verdict, size = 18 }: { verdict: Verdict; size?: number }) {
+  const ink = color[verdictTone[verdict]];
+  return (
+    <Svg width={size} height={size} viewBox="0 0 18 18" fill="none" aria-hidden>
+      <Circle
+        cx={9}
+        cy={9}
+        r={7.9}
+        stroke={ink}
+        strokeWidth={1.5}
+        strokeDasharray={verdict === 'one-route' ? '3 2.2' : undefined}
+      />
+      {lines[verdict].map((d) => (
+        <Path key={d} d={d} stroke={ink} strokeWidth={1.5} strokeLinecap="round" />
+      ))}
+    </Svg>
+  );
+}
+
+/** The verdict as shape, word and colour together. `long` spells it as a sentence's beginning. */
+export function VerdictMark({ verdict, long = false }: { verdict: Verdict; long?: boolean }) {
+  return (
+    <View style={styles.row}>
+      <VerdictShape verdict={verdict} size={long ? 18 : 16} />
+      <Text size={long ? 'body' : 'small'} weight="semibold" tone={verdictTone[verdict]}>
+        {long ? uiText.verdictTitle[verdict] : uiText.verdictWord[verdict]}
+      </Text>
+    </View>
+  );
+}
+
+export type BadgeProps = { label: string; tone?: Exclude<Tone, 'ink'> };
+
+const softOf: Record<Exclude<Tone, 'ink'>, string> = {
+  muted: color.sunk,
+  lake: color.lakeSoft,
+  moss: color.mossSoft,
+  ochre: color.ochreSoft,
+  brick: color.brickSoft,
+};
+
+export function Badge({ label, tone = 'muted' }: BadgeProps) {
+  return (
+    <View style={[styles.badge, { backgroundColor: softOf[tone] }]}>
+      <Text size="small" weight="medium" tone={tone}>
+        {label}
+      </Text>
+    </View>
+  );
+}
+
+const styles = StyleSheet.create({
+  row: { flexDirection: 'row', alignItems: 'center', gap: space.xs + 2 },
+  badge: {
+    alignSelf: 'flex-start',
+    paddingHorizontal: space.sm,
+    paddingVertical: 1,
+    borderRadius: radius.small,
+  },
+});
