@@ -17,13 +17,19 @@ const { startStages } = require('./lib/stages');
 const { removeAbandonedClusters, startTestCluster } = require('./lib/test-cluster');
 const { ensureWebBuild } = require('./lib/web-build');
 
+/** bcrypt at its least cost: hashing slowly is no part of what is tested. */
+const quickPasswords = { PASSWORD_COST: '4' };
+
 /** Brings up the whole product on a seeded database; gives the environment of the browser tests. */
 async function startProduct() {
   const database = await startTestCluster();
   const keysFolder = path.join(database.folder, 'keys');
   makePrivateFolder(keysFolder);
   const port = await probePort(0);
-  const environment = serviceEnvironment({ database, keysFolder, port });
+  const environment = {
+    ...serviceEnvironment({ database, keysFolder, port }),
+    ...quickPasswords,
+  };
   await seedDatabase(environment);
   const service = startService(environment);
   if (!(await waitUntilReady(port, () => hasEnded(service))))
@@ -55,7 +61,7 @@ main(async () => {
     const database = await startTestCluster();
     const urls = { DATABASE_URL: database.appUrl, DATABASE_OWNER_URL: database.ownerUrl };
     const args = ['--selectProjects', 'node', 'web', '--maxWorkers=100%'];
-    return runJest(args, { ...process.env, ...urls });
+    return runJest(args, { ...process.env, ...urls, ...quickPasswords });
   });
   await stage('builds', () =>
     attempt(async () => {
