@@ -62,7 +62,8 @@ function adopt(session: Session) {
   setState({ status: 'signed-in', me: session.me });
 }
 
-function forget() {
+/** Nobody is signed in: nothing of whoever was stays in this tab. */
+export function forgetSession(): void {
   accessToken = undefined;
   queryClient.clear();
   settlePrompt(false);
@@ -167,7 +168,7 @@ export async function restoreSession(): Promise<void> {
     await refresh();
   } catch (error) {
     if (!isSignedOut(error)) throw error;
-    forget();
+    forgetSession();
   }
 }
 
@@ -184,7 +185,7 @@ export async function confirmPassword(password: string): Promise<void> {
 /** Without an answer of the server the cookie would live on: then nothing is signed out at all. */
 export async function signOut(): Promise<void> {
   await alone(() => callEndpoint(endpoints.signOut, { accessToken }));
-  forget();
+  forgetSession();
 }
 
 /** Marks one intention, so that sending it twice creates one record. */

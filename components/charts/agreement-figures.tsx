@@ -5,7 +5,7 @@ import { space } from '@/constants/theme';
 import { DataTable, type Column } from '@/components/ui/data-table';
 import { Dialog } from '@/components/ui/dialog';
 import { Text } from '@/components/ui/text';
-import { VerdictMark } from '@/components/ui/verdict-mark';
+import { VerdictMark } from './verdict-mark';
 import { formatDifference, formatErrorEstimate, formatNumber } from '@/shared/format/numbers';
 import { findingOf, type Agreement, type StripRoute } from './agreement-finding';
 import { RouteDot } from './route-dot';

@@ -4,7 +4,7 @@ import Svg, { Line, Rect } from 'react-native-svg';
 import { color, space } from '@/constants/theme';
 import { agreementText } from '@/constants/texts/agreement';
 import { Text } from '@/components/ui/text';
-import { VerdictMark } from '@/components/ui/verdict-mark';
+import { VerdictMark } from './verdict-mark';
 import { AgreementFigures } from './agreement-figures';
 import { findingOf, type Agreement } from './agreement-finding';
 import { layOutStrip, type PlacedRoute } from './agreement-scale';

@@ -25,6 +25,8 @@ export type DataTableProps<Row> = {
   sticky?: boolean;
   /** The page of a row: its first cell becomes the link, and the whole row opens it. */
   rowHref?: (row: Row) => string;
+  /** Without a frame of its own, for a table that stands in a section. */
+  plain?: boolean;
   /** What a narrow window shows instead of a row; without it the table scrolls sideways. */
   card?: (row: Row) => ReactNode;
 };
@@ -63,7 +65,7 @@ function followRow(event: MouseEvent<HTMLTableRowElement>) {
 }
 
 export function DataTable<Row extends object>(props: DataTableProps<Row>) {
-  const { caption, columns, rows, rowId, rowHref, card, sticky = false } = props;
+  const { caption, columns, rows, rowId, rowHref, card, sticky = false, plain = false } = props;
   const wide = useWide();
   const data = useMemo(() => [...rows], [rows]);
   const definitions = useMemo(() => definitionsOf(columns), [columns]);
@@ -80,7 +82,7 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
     );
   const alignOf = (id: string) => columns.find((column) => column.id === id)?.align;
   return (
-    <div className={sticky ? 'table-frame table-sticky' : 'table-frame table-scroll'}>
+    <div className={`${plain ? '' : 'table-frame'} ${sticky ? 'table-sticky' : 'table-scroll'}`}>
       <table className="table">
         <caption className="visually-hidden">{caption}</caption>
         <thead>

@@ -1,7 +1,8 @@
-import { useEffect, type ReactNode } from 'react';
+import { createContext, use, useEffect, type ReactNode } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { uiText } from '@/constants/texts/ui';
 import { color, space } from '@/constants/theme';
+import { Mark } from './icon';
 import { Heading, Text } from './text';
 import { useWide } from './use-wide';
 
@@ -17,10 +18,14 @@ export type ScreenProps = {
   children: ReactNode;
 };
 
+/** What the frame puts at the right of the heading in a narrow window. */
+export const ScreenCorner = createContext<ReactNode>(null);
+
 /** A page: the main landmark with its heading, which also names the browser's tab. */
 export function Screen(props: ScreenProps) {
   const { title, overline, subtitle, actions, measure = 1180, children } = props;
   const wide = useWide();
+  const corner = use(ScreenCorner);
   useEffect(() => {
     document.title = `${title} · ${uiText.product}`;
   }, [title]);
@@ -28,6 +33,7 @@ export function Screen(props: ScreenProps) {
     <View role="main" nativeID="content" tabIndex={-1} style={[styles.main, wide && styles.wide]}>
       <View style={[styles.column, { maxWidth: measure }]}>
         <View style={styles.head}>
+          {wide ? null : <Mark size={30} />}
           <View style={styles.words}>
             {typeof overline === 'string' ? (
               <Text size="small" tone="muted">
@@ -39,6 +45,7 @@ export function Screen(props: ScreenProps) {
             <Heading level={1}>{title}</Heading>
             {typeof subtitle === 'string' ? <Text tone="muted">{subtitle}</Text> : subtitle}
           </View>
+          {wide ? null : corner}
           {actions ? <View style={styles.actions}>{actions}</View> : null}
         </View>
         {children}
@@ -54,10 +61,9 @@ const styles = StyleSheet.create({
   head: {
     flexDirection: 'row',
     flexWrap: 'wrap',
-    alignItems: 'flex-end',
-    justifyContent: 'space-between',
+    alignItems: 'center',
     gap: space.md,
   },
-  words: { flexShrink: 1, gap: 2 },
+  words: { flexGrow: 1, flexShrink: 1, flexBasis: 120, gap: 2 },
   actions: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', gap: space.sm },
 });

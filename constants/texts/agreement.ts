@@ -12,6 +12,18 @@ export const agreementText = {
   unknownError: 'A route gave no error estimate, so there is no agreement to speak of.',
   refuted: 'An error estimate is refuted: the routes lie further apart than their estimates allow.',
   caution: '“Routes agree” says that the sums are right, not that the model is.',
+  verdictWord: {
+    agree: 'agree',
+    wide: 'wide',
+    disagree: 'disagree',
+    'one-route': 'one route',
+  },
+  verdictTitle: {
+    agree: 'Routes agree',
+    wide: 'Agreement is wide',
+    disagree: 'Routes differ',
+    'one-route': 'One route only',
+  },
   open: 'Show the figures.',
   dialogTitle: 'How far the routes agree',
   route: 'route',
@@ -20,5 +32,4 @@ export const agreementText = {
   apart: 'apart',
   reference: 'reference',
   table: 'Routes with value, error estimate and distance',
-  beyond: 'beyond the axis',
 } as const;

@@ -1,9 +1,9 @@
 import { StyleSheet, View } from 'react-native';
 import Svg, { Circle, Path } from 'react-native-svg';
 import type { Verdict } from '@/pricing/contract';
-import { color, radius, space } from '@/constants/theme';
-import { uiText } from '@/constants/texts/ui';
-import { Text, type Tone } from './text';
+import { color, space } from '@/constants/theme';
+import { agreementText } from '@/constants/texts/agreement';
+import { Text, type Tone } from '@/components/ui/text';
 
 export const verdictTone: Record<Verdict, Tone> = {
   agree: 'moss',
@@ -45,27 +45,7 @@ export function VerdictMark({ verdict, long = false }: { verdict: Verdict; long?
     <View style={styles.row}>
       <VerdictShape verdict={verdict} size={long ? 18 : 16} />
       <Text size={long ? 'body' : 'small'} weight="semibold" tone={verdictTone[verdict]}>
-        {long ? uiText.verdictTitle[verdict] : uiText.verdictWord[verdict]}
-      </Text>
-    </View>
-  );
-}
-
-export type BadgeProps = { label: string; tone?: Exclude<Tone, 'ink'> };
-
-const softOf: Record<Exclude<Tone, 'ink'>, string> = {
-  muted: color.sunk,
-  lake: color.lakeSoft,
-  moss: color.mossSoft,
-  ochre: color.ochreSoft,
-  brick: color.brickSoft,
-};
-
-export function Badge({ label, tone = 'muted' }: BadgeProps) {
-  return (
-    <View style={[styles.badge, { backgroundColor: softOf[tone] }]}>
-      <Text size="small" weight="medium" tone={tone}>
-        {label}
+        {long ? agreementText.verdictTitle[verdict] : agreementText.verdictWord[verdict]}
       </Text>
     </View>
   );
@@ -73,10 +53,4 @@ export function Badge({ label, tone = 'muted' }: BadgeProps) {
 
 const styles = StyleSheet.create({
   row: { flexDirection: 'row', alignItems: 'center', gap: space.xs + 2 },
-  badge: {
-    alignSelf: 'flex-start',
-    paddingHorizontal: space.sm,
-    paddingVertical: 1,
-    borderRadius: radius.small,
-  },
 });

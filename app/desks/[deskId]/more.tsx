@@ -1,0 +1,5 @@
+import { MoreScreen } from '@/components/shell/more-screen';
+
+export default function MoreRoute() {
+  return <MoreScreen />;
+}
