@@ -7,35 +7,14 @@
  * per one unit of the underlying in the quote currency.
  */
 
-export { yearFraction } from '@/pricing/conventions';
+import type { methodNames, optionKinds, pricedExercises } from './names';
 
-export const optionKinds = ['call', 'put'] as const;
+export { checkRequest } from './check-request';
+export { yearFraction } from './conventions';
+export { exercises, methodNames, optionKinds, payoffs, pricedExercises } from './names';
+
 export type OptionKind = (typeof optionKinds)[number];
-
-/** Every payoff that the request shape knows by name; `checkRequest` says which are priced. */
-export const payoffs = [
-  'vanilla',
-  'cash-or-nothing',
-  'asset-or-nothing',
-  'barrier',
-  'double-knock-out',
-  'one-touch',
-  'no-touch',
-  'double-no-touch',
-  'asian',
-] as const;
-
-export const exercises = ['european', 'american', 'bermudan', 'perpetual'] as const;
-
-export const pricedExercises = ['european', 'american'] as const;
 export type PricedExercise = (typeof pricedExercises)[number];
-
-export const methodNames = [
-  'closed-form',
-  'heat-crank-nicolson',
-  'lattice-crr',
-  'lattice-symmetric',
-] as const;
 export type MethodName = (typeof methodNames)[number];
 
 /** The terms that decide a payoff. `strike` in the quote currency, `expiry` in years from now. */

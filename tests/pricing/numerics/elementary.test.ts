@@ -3,10 +3,19 @@
  * cases against ECMA-262 (Math.exp, Math.pow and so on) and, for erfc, the limits of its definition.
  */
 import fc from 'fast-check';
-import * as elementary from '@/pricing/numerics/elementary';
+import {
+  cos,
+  erfc,
+  erfcx,
+  exp,
+  expm1,
+  log,
+  log1p,
+  logRatio,
+  pow,
+  sin,
+} from '@/pricing/numerics/elementary';
 import { worstError } from './units-in-last-place';
-
-const { cos, erfc, erfcx, exp, expm1, log, log1p, logRatio, pow, sin } = elementary;
 
 describe('against mpmath, over the whole range', () => {
   it.each([
@@ -29,11 +38,18 @@ describe('against mpmath, over the whole range', () => {
 });
 
 describe('special cases', () => {
-  it.each(['exp', 'expm1', 'log', 'log1p', 'sin', 'cos'] as const)(
+  it.each([
+    ['exp', exp, Math.exp],
+    ['expm1', expm1, Math.expm1],
+    ['log', log, Math.log],
+    ['log1p', log1p, Math.log1p],
+    ['sin', sin, Math.sin],
+    ['cos', cos, Math.cos],
+  ] as const)(
     '%s treats zeros, infinities, NaN and the ends of the range as ECMA-262 does',
-    (name) => {
-      const extremes = [0, -0, Infinity, -Infinity, NaN, 5e-324, -5e-324, 1.8e308, -1.8e308, -1];
-      for (const x of extremes) expect(elementary[name](x)).toBe(Math[name](x));
+    (_name, ours, standard) => {
+      const extremes = [0, -0, Infinity, -Infinity, NaN, 5e-324, -5e-324, -1];
+      for (const x of extremes) expect(ours(x)).toBe(standard(x));
     },
   );
 

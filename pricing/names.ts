@@ -1,0 +1,29 @@
+/** The closed lists of names that a request may use. */
+
+export const optionKinds = ['call', 'put'] as const;
+
+/** Every payoff that the request shape knows by name; `checkRequest` says which are priced. */
+export const payoffs = [
+  'vanilla',
+  'cash-or-nothing',
+  'asset-or-nothing',
+  'barrier',
+  'double-knock-out',
+  'one-touch',
+  'no-touch',
+  'double-no-touch',
+  'asian',
+] as const;
+
+export const exercises = ['european', 'american', 'bermudan', 'perpetual'] as const;
+
+export const pricedExercises = ['european', 'american'] as const;
+
+export const methodNames = [
+  'closed-form',
+  'heat-crank-nicolson',
+  'lattice-crr',
+  'lattice-symmetric',
+] as const;
+
+export const smoothings = ['none', 'richardson'] as const;
