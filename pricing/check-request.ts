@@ -24,7 +24,7 @@ type Limited = keyof typeof numberLimits;
 /** The settings that each method reads besides its name. */
 const settingsOf: Record<MethodName, readonly (Size | 'smoothing')[]> = {
   'closed-form': [],
-  'heat-crank-nicolson': ['spaceSteps', 'timeSteps'],
+  'heat-crank-nicolson': ['spaceSteps', 'timeSteps', 'smoothing'],
   'lattice-crr': ['steps', 'smoothing'],
   'lattice-symmetric': ['steps', 'smoothing'],
 };
@@ -70,6 +70,10 @@ function asFields(value: unknown): Fields | undefined {
   return { ...value };
 }
 
+/** 1e12, not thirteen digits that nobody can count. */
+const written = (limit: number) =>
+  limit > 1e6 ? limit.toExponential().replace('+', '') : String(limit);
+
 const listed = (names: readonly string[]) => names.map((name) => `“${name}”`).join(', ');
 
 function refuseOthers(
@@ -111,7 +115,7 @@ function checkLimited(issues: Issues, path: string, name: Limited, given: unknow
   if (value <= 0 && !signed.includes(name)) {
     report(issues, 'not-positive', path, `The ${labels[name]} must be greater than zero.`);
   } else if (value < min || value > max) {
-    const range = `between ${min} and ${max}, ${advice[name]}`;
+    const range = `between ${written(min)} and ${written(max)}, ${advice[name]}`;
     report(issues, 'out-of-range', path, `The ${labels[name]} must lie ${range}.`);
   }
   return value;
