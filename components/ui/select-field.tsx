@@ -15,7 +15,7 @@ export type SelectFieldProps<Value extends string> = FieldFrameProps & {
 };
 
 export function SelectField<Value extends string>(props: SelectFieldProps<Value>) {
-  const { label, hint, error, value, options, onChange } = props;
+  const { label, hint, error, value, options, onChange, ref } = props;
   const ids = useFieldIds(props);
   const pick = (text: string) => {
     const chosen = options.find((option) => option.value === text);
@@ -28,7 +28,7 @@ export function SelectField<Value extends string>(props: SelectFieldProps<Value>
           {label}
         </label>
         <select
-          ref={props.ref}
+          ref={ref}
           className="field-input field-select"
           id={ids.control}
           name={props.name}

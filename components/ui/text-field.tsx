@@ -88,7 +88,7 @@ export type TextAreaFieldProps = FieldFrameProps &
 
 /** Several lines, for reasons and notes. */
 export function TextAreaField(props: TextAreaFieldProps) {
-  const { label, hint, error, value, onChangeText } = props;
+  const { label, hint, error, value, onChangeText, ref } = props;
   const ids = useFieldIds(props);
   return (
     <div>
@@ -97,7 +97,7 @@ export function TextAreaField(props: TextAreaFieldProps) {
           {label}
         </label>
         <textarea
-          ref={props.ref}
+          ref={ref}
           className="field-input field-area"
           id={ids.control}
           name={props.name}
