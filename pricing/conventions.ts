@@ -41,8 +41,8 @@ export function carryYield(market: Market): number {
  * keyboard or of a unit (5 for 5 %), and is refused with a sentence, never adjusted.
  */
 export const numberLimits = {
-  strike: { min: 1e-9, max: 1e12 },
-  spot: { min: 1e-9, max: 1e12 },
+  strike: { min: 1e-12, max: 1e12 },
+  spot: { min: 1e-12, max: 1e12 },
   /** From half a minute to a century. */
   expiry: { min: 1e-6, max: 100 },
   rate: { min: -1, max: 1 },

@@ -95,6 +95,8 @@ def sample(family, region):
     strike = forward * 2.718281828459045 ** (deviations * vol * expiry**0.5)
     if region == 'round':
         strike = float(rng.randint(max(1, int(spot * 0.7)), int(spot * 1.3) + 1))
+    if not 1e-12 <= strike <= 1e12:
+        return sample(family, region)
     market = {'spot': spot, 'rate': rate, 'yield': other, 'volatility': vol}
     if family == 'black76':
         market = {'spot': spot, 'rate': rate, 'carry': 'future', 'volatility': vol}
