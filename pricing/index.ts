@@ -1,0 +1,66 @@
+/**
+ * The engine's only door: prices, the routes of a cross-check and their verdict, and the questions
+ * asked the other way round. Plain functions of plain data; safe in a browser worker, in a server
+ * thread and in a test.
+ */
+import {
+  checkRequest,
+  type Contract,
+  type Market,
+  type MethodName,
+  type PricingResult,
+} from '@/pricing/contract';
+import { methodNamed, methods, methodsFor } from '@/pricing/registry';
+import { priceWithin } from '@/pricing/tolerance';
+import { judgeRoutes, type ComparedRoute, type RouteVerdict } from '@/pricing/verdict';
+
+export { checkRequest } from '@/pricing/contract';
+export type { RouteVerdict, WorstPair } from '@/pricing/verdict';
+
+/** Recorded with every stored value; raised whenever any value could come out differently. */
+export const engineVersion = '1.0.0';
+
+/** What screens and documents say about the methods, in the registry's order. */
+export const methodSummaries: readonly { name: MethodName; label: string; summary: string }[] =
+  methods.map(({ name, label, summary }) => ({ name, label, summary }));
+
+/** Checks, chooses the method and prices; whatever is wrong with the input is a failure value. */
+export function price(input: unknown): PricingResult {
+  const checked = checkRequest(input);
+  if (!checked.ok) return { ok: false, ...checked.issues[0] };
+  const { contract, market, method: choice } = checked.request;
+  const able = methodsFor(contract, market);
+  if (choice !== undefined && 'tolerance' in choice) {
+    return priceWithin(contract, market, choice.tolerance, able);
+  }
+  if (choice === undefined) return able[0].price(contract, market, {});
+  const { name, ...settings } = choice;
+  return methodNamed(name).price(contract, market, settings);
+}
+
+/** The routes that a cross-check of this contract takes: three at most, the most accurate first. */
+export function routesFor(contract: Contract, market: Market): MethodName[] {
+  return methodsFor(contract, market)
+    .slice(0, 3)
+    .map(({ name }) => name);
+}
+
+export type PricedRoute = { name: MethodName; result: PricingResult };
+
+export function priceRoutes(contract: Contract, market: Market): PricedRoute[] {
+  return routesFor(contract, market).map((name) => ({
+    name,
+    result: price({ contract, market, method: { name } }),
+  }));
+}
+
+/** The verdict over the routes that gave a price; `tolerance` in the unit of the values. */
+export function compareRoutes(routes: readonly PricedRoute[], tolerance: number): RouteVerdict {
+  const compared: ComparedRoute[] = [];
+  for (const { name, result } of routes) {
+    if (!result.ok) continue;
+    const { value, errorEstimate } = result;
+    compared.push({ name, value, errorEstimate, machinery: methodNamed(name).machinery });
+  }
+  return judgeRoutes(compared, tolerance);
+}

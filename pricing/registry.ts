@@ -1,0 +1,27 @@
+import type { Contract, Market, MethodName } from '@/pricing/contract';
+import type { Method } from '@/pricing/method';
+import { closedForm } from '@/pricing/methods/closed-form';
+import { heatCrankNicolson } from '@/pricing/methods/heat-crank-nicolson';
+import { latticeCrr } from '@/pricing/methods/lattice-crr';
+import { latticeSymmetric } from '@/pricing/methods/lattice-symmetric';
+
+/**
+ * The one list of methods, the most accurate first: the first that prices a contract is what a
+ * request without a method gets, and the first three are what a cross-check compares.
+ */
+export const methods: readonly Method[] = [
+  closedForm,
+  heatCrankNicolson,
+  latticeSymmetric,
+  latticeCrr,
+];
+
+export function methodNamed(name: MethodName): Method {
+  const method = methods.find((candidate) => candidate.name === name);
+  if (method === undefined) throw new Error(`no method named ${name} is registered`);
+  return method;
+}
+
+export function methodsFor(contract: Contract, market: Market): Method[] {
+  return methods.filter((method) => method.prices(contract, market));
+}

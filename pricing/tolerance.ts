@@ -1,0 +1,57 @@
+import type { Contract, Market, PricingResult } from '@/pricing/contract';
+import { sizeLimits } from '@/pricing/conventions';
+import type { Method, MethodSizes } from '@/pricing/method';
+
+type Candidate = { method: Method; settings: MethodSizes; work: number };
+
+/**
+ * The cheapest method and size whose own error estimate holds the tolerance. Every method's sizes
+ * are doubled from its coarsest to the cap, all of them are put in the order of their work, and the
+ * first that holds is the answer; what was tried before costs no more than it does, or thereabouts.
+ */
+export function priceWithin(
+  contract: Contract,
+  market: Market,
+  tolerance: number,
+  methods: readonly Method[],
+): PricingResult {
+  const candidates = methods.flatMap(candidatesOf).sort((a, b) => a.work - b.work);
+  let best = Infinity;
+  for (const { method, settings } of candidates) {
+    const result = method.price(contract, market, settings);
+    if (!result.ok || result.errorEstimate === null) continue;
+    if (result.errorEstimate <= tolerance) return result;
+    best = Math.min(best, result.errorEstimate);
+  }
+  const reached = best < Infinity ? `the smallest estimate reached is ${best.toPrecision(2)}` : '';
+  return {
+    ok: false,
+    code: 'tolerance-not-reached',
+    path: 'method.tolerance',
+    message: `No method holds this tolerance within the largest sizes allowed${reached && `; ${reached}`}. Ask for a larger tolerance.`,
+  };
+}
+
+function candidatesOf(method: Method): Candidate[] {
+  const candidates: Candidate[] = [];
+  let settings: MethodSizes | null = method.coarsestSettings;
+  while (settings !== null) {
+    candidates.push({ method, settings, work: method.work(settings) });
+    settings = doubled(settings);
+  }
+  return candidates;
+}
+
+/** Null where a size would pass its cap, or where there is none to double. */
+function doubled(settings: MethodSizes): MethodSizes | null {
+  const next = { ...settings };
+  let sized = false;
+  for (const size of ['spaceSteps', 'timeSteps', 'steps'] as const) {
+    const before = settings[size];
+    if (before === undefined) continue;
+    if (2 * before > sizeLimits[size].max) return null;
+    next[size] = 2 * before;
+    sized = true;
+  }
+  return sized ? next : null;
+}
