@@ -1,5 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod';
-import { Controller, useForm } from 'react-hook-form';
+import { Controller, useForm, useWatch } from 'react-hook-form';
 import type { z } from 'zod';
 import { SelectField } from '@/components/ui/select-field';
 import { TextAreaField, type TextAreaFieldProps } from '@/components/ui/text-field';
@@ -49,6 +49,7 @@ export function RoleDialog({ member, onClose, onDone }: MemberDialogProps) {
     resolver: zodResolver(roleFormSchema),
     defaultValues: { role: other, reason: '' },
   });
+  const role = useWatch({ control: form.control, name: 'role' });
   const submit = form.handleSubmit((values) =>
     confirmation.confirm(
       { kind: 'set-role', body: { ...values, version: member.version } },
@@ -59,7 +60,7 @@ export function RoleDialog({ member, onClose, onDone }: MemberDialogProps) {
     <ActDialog
       title={memberText.setRole}
       act={memberText.setRole}
-      consequences={consequencesOfRole(member, form.watch('role'))}
+      consequences={consequencesOfRole(member, role)}
       confirmation={confirmation}
       onSubmit={(event) => void submit(event)}
       onClose={onClose}

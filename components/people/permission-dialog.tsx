@@ -1,6 +1,6 @@
 import { zodResolver } from '@hookform/resolvers/zod';
-import { useRef } from 'react';
-import { Controller, useForm } from 'react-hook-form';
+import { useRef, useState } from 'react';
+import { Controller, useForm, useWatch } from 'react-hook-form';
 import { z } from 'zod';
 import { SelectField } from '@/components/ui/select-field';
 import { TextField } from '@/components/ui/text-field';
@@ -70,7 +70,7 @@ function useContentKey() {
 
 function usePermissionForm({ member, onDone, effect }: PermissionDialogProps) {
   const desk = useDesk();
-  const today = dateInZone(Date.now(), desk.timeZone);
+  const [today] = useState(() => dateInZone(Date.now(), desk.timeZone));
   const keyFor = useContentKey();
   const confirmation = useConfirmation(desk.id, member, onDone);
   const options = changeable(member, effect);
@@ -86,8 +86,9 @@ function usePermissionForm({ member, onDone, effect }: PermissionDialogProps) {
       form.setError(field ?? 'reason', { message });
     });
   });
-  const endsOn = endsOnSchema(today).safeParse(form.watch('endsOn'));
-  const permission = form.watch('permission');
+  const typed = useWatch({ control: form.control });
+  const endsOn = endsOnSchema(today).safeParse(typed.endsOn);
+  const permission = typed.permission ?? options[0];
   const consequences = consequencesOfChange(
     member,
     { permission, effect },

@@ -13,13 +13,16 @@ export function SessionGate({ children }: { children: ReactNode }) {
   const { status } = useSession();
   const [failure, setFailure] = useState<ApiError | null>(null);
   const restore = useCallback(() => {
-    setFailure(null);
     restoreSession().catch((error: unknown) => {
       if (!(error instanceof ApiError)) throw error;
       setFailure(error);
     });
   }, []);
   useEffect(restore, [restore]);
+  const retry = () => {
+    setFailure(null);
+    restore();
+  };
   if (status !== 'unknown') return children;
   return (
     <View role="main" aria-busy={failure === null} style={styles.page}>
@@ -27,7 +30,7 @@ export function SessionGate({ children }: { children: ReactNode }) {
         <Mark size={56} />
       </View>
       {failure ? (
-        <ErrorState message={failure.message} requestId={failure.requestId} onRetry={restore} />
+        <ErrorState message={failure.message} requestId={failure.requestId} onRetry={retry} />
       ) : null}
     </View>
   );
