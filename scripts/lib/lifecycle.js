@@ -73,6 +73,8 @@ async function run(command, args, options) {
   onStop(cleanup);
   try {
     const { code } = await started.ended;
+    // A command that Ctrl-C reached as well may still end with 0, its work half done.
+    if (isStopping()) throw new Refusal('Stopping.');
     return code ?? 1;
   } finally {
     const index = cleanups.indexOf(cleanup);

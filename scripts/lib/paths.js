@@ -11,7 +11,10 @@ function checkoutHash(checkout) {
   return crypto.createHash('sha256').update(checkout).digest('hex').slice(0, 16);
 }
 
-/** The folder of the database, its passwords and the server's keys. */
+/**
+ * The folder of the database, its passwords and the server's keys.
+ * @param {{ DRIFTLESS_DATA?: string }} environment
+ */
 function stateFolder(environment = process.env) {
   if (environment.DRIFTLESS_DATA) return path.resolve(environment.DRIFTLESS_DATA);
   const parent =

@@ -2,7 +2,7 @@
 const fs = require('node:fs');
 const path = require('node:path');
 const { takeCheckoutLock } = require('./install');
-const { say } = require('./lifecycle');
+const { Refusal, say } = require('./lifecycle');
 const { buildFolder, cacheFolder, root } = require('./paths');
 const { hashInputs, isMadeFrom, writeStamp } = require('./stamp');
 
@@ -22,20 +22,15 @@ function entryPoints() {
   return ['server/main.ts', 'server/seed.ts', ...threads.map((name) => `server/threads/${name}`)];
 }
 
-async function ensureServerBuild() {
-  const release = await takeCheckoutLock();
+async function bundle(folder) {
+  // Required here: the package is there only once the packages are installed.
+  const esbuild = require('esbuild');
   try {
-    const hash = hashInputs(root, inputs);
-    if (isMadeFrom(buildFolder, hash)) return;
-    say('Building the server.');
-    const made = path.join(cacheFolder, 'server-build');
-    fs.rmSync(made, { recursive: true, force: true });
-    // Required here: the package is there only once the packages are installed.
-    await require('esbuild').build({
+    await esbuild.build({
       absWorkingDir: root,
       entryPoints: entryPoints(),
       outbase: '.',
-      outdir: made,
+      outdir: folder,
       bundle: true,
       platform: 'node',
       target: 'node20',
@@ -44,6 +39,24 @@ async function ensureServerBuild() {
       sourcemap: true,
       logLevel: 'warning',
     });
+  } catch (error) {
+    throw new Refusal('The server could not be built; the messages above say why.', {
+      cause: error,
+    });
+  } finally {
+    await esbuild.stop();
+  }
+}
+
+async function ensureServerBuild() {
+  const release = await takeCheckoutLock();
+  try {
+    const hash = hashInputs(root, inputs);
+    if (isMadeFrom(buildFolder, hash)) return;
+    say('Building the server.');
+    const made = path.join(cacheFolder, 'server-build');
+    fs.rmSync(made, { recursive: true, force: true });
+    await bundle(made);
     writeStamp(made, hash);
     fs.rmSync(buildFolder, { recursive: true, force: true });
     fs.renameSync(made, buildFolder);

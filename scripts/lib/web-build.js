@@ -47,7 +47,8 @@ async function ensureWebBuild() {
       [expoCli, 'export', '--platform', 'web', '--output-dir', made],
       { env: { ...expoEnvironment(), CI: '1', NODE_ENV: 'production' } },
     );
-    if (code !== 0) throw new Refusal('The export of the pages failed; its message is above.');
+    if (code !== 0 || !fs.existsSync(path.join(made, 'index.html')))
+      throw new Refusal('The export of the pages failed; its message is above.');
     writeStamp(made, hash);
     fs.rmSync(webFolder, { recursive: true, force: true });
     fs.renameSync(made, webFolder);
