@@ -94,6 +94,7 @@ export const pricingIssueCodes = [
   'too-many-steps',
   'too-few-steps',
   'tolerance-not-reached',
+  'not-determined',
   'numerical-failure',
 ] as const;
 export type PricingIssueCode = (typeof pricingIssueCodes)[number];

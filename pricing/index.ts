@@ -8,13 +8,18 @@ import {
   type Contract,
   type Market,
   type MethodName,
+  type PricingRequest,
   type PricingResult,
 } from '@/pricing/contract';
+import { solveImpliedVolatility } from '@/pricing/implied/implied-volatility';
+import type { Solved } from '@/pricing/implied/solved';
+import { solveStrikeForDelta } from '@/pricing/implied/strike-for-delta';
 import { methodNamed, methods, methodsFor } from '@/pricing/registry';
 import { priceWithin } from '@/pricing/tolerance';
 import { judgeRoutes, type ComparedRoute, type RouteVerdict } from '@/pricing/verdict';
 
 export { checkRequest } from '@/pricing/contract';
+export type { Solved } from '@/pricing/implied/solved';
 export type { RouteVerdict, WorstPair } from '@/pricing/verdict';
 
 /** Recorded with every stored value; raised whenever any value could come out differently. */
@@ -63,4 +68,14 @@ export function compareRoutes(routes: readonly PricedRoute[], tolerance: number)
     compared.push({ name, value, errorEstimate, machinery: methodNamed(name).machinery });
   }
   return judgeRoutes(compared, tolerance);
+}
+
+/** The volatility at which the request is worth the premium; the request's own plays no part. */
+export function impliedVolatility(request: PricingRequest, premium: number): Solved {
+  return solveImpliedVolatility(request, premium, price);
+}
+
+/** The strike at which the request has the delta; the request's own plays no part. */
+export function strikeForDelta(request: PricingRequest, delta: number): Solved {
+  return solveStrikeForDelta(request, delta, price);
 }

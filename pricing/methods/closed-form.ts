@@ -22,10 +22,10 @@
  * combined as independent errors. It holds in at least 95 % of cases.
  */
 import type { Contract, Greeks, Market, PricingResult } from '@/pricing/contract';
+import { forwardGain, legsOf, type Legs } from '@/pricing/closed-form/legs';
 import { branchFor, outOfTheMoney } from '@/pricing/closed-form/out-of-the-money';
-import { carryYield } from '@/pricing/conventions';
 import type { Method } from '@/pricing/method';
-import { exp, expm1, logRatio } from '@/pricing/numerics/elementary';
+import { exp } from '@/pricing/numerics/elementary';
 import { millsRatio, normalCdf, normalDensity } from '@/pricing/numerics/normal';
 
 const ROUNDING = 1.1102230246251565e-16;
@@ -33,61 +33,34 @@ const SMALLEST_NORMAL = 2.2250738585072014e-308;
 /** The independent errors are each about half their bound; this makes the sum a safe one. */
 const SAFETY = 1.7;
 
-/** The numbers that value, Greeks and error share. A and B as above. */
-type Terms = {
-  sign: number;
-  legA: number;
-  legB: number;
-  logSpotStrike: number;
-  drift: number;
-  x: number;
+/** The numbers that value, Greeks and error share; the names are those of the formula above. */
+type Terms = Legs & {
   s: number;
   d1: number;
   d2: number;
   rootExpiry: number;
-  yieldDiscount: number;
-  carry: number;
   /** The value of the option on the other side of the forward: what is left above parity. */
   extrinsic: number;
 };
 
 function termsOf(contract: Contract, market: Market): Terms {
-  const { strike, expiry } = contract;
-  const { spot, rate, volatility } = market;
-  const carry = carryYield(market);
-  const yieldDiscount = exp(-carry * expiry);
-  const logSpotStrike = logRatio(spot, strike);
-  const drift = (rate - carry) * expiry;
-  const x = logSpotStrike + drift;
-  const rootExpiry = Math.sqrt(expiry);
-  const s = volatility * rootExpiry;
-  const legA = spot * yieldDiscount;
-  const legB = strike * exp(-rate * expiry);
+  const legs = legsOf(contract, market);
+  const { x, legA, legB } = legs;
+  const rootExpiry = Math.sqrt(contract.expiry);
+  const s = market.volatility * rootExpiry;
   return {
-    sign: contract.kind === 'call' ? 1 : -1,
-    legA,
-    legB,
-    logSpotStrike,
-    drift,
-    x,
+    ...legs,
     s,
     d1: x / s + 0.5 * s,
     d2: x / s - 0.5 * s,
     rootExpiry,
-    yieldDiscount,
-    carry,
     extrinsic: Math.min(legA, legB) * outOfTheMoney(-Math.abs(x), s),
   };
 }
 
-/** The discounted forward's gain for the holder, A - B for a call; exact where the legs are close. */
-function intrinsicOf({ sign, legA, legB, x }: Terms): number {
-  return sign * (Math.abs(x) < 0.5 ? legB * expm1(x) : legA - legB);
-}
-
 function valueOf(terms: Terms): number {
   const { sign, x, extrinsic } = terms;
-  return sign * x > 0 ? intrinsicOf(terms) + extrinsic : extrinsic;
+  return sign * x > 0 ? forwardGain(terms) + extrinsic : extrinsic;
 }
 
 function greeksOf(contract: Contract, market: Market, terms: Terms, value: number): Greeks {
