@@ -51,6 +51,8 @@ export type AmericanSolution = {
   boundary: number | null;
   /** Largest ½σ²·Δt/Δx² of all steps and cells: how far from an explicit scheme this is. */
   stability: number;
+  /** The drift outruns the diffusion of the cells at the strike or at the spot. */
+  firstOrder: boolean;
 };
 
 /** Steps at either end that are taken as two implicit half-steps each. */
@@ -99,7 +101,13 @@ export function solveAmericanPut(
   for (let j = 0; j <= intervals; j++) obstacle[j] = -expm1(x[j]);
   const values = payoffOf(nodes, obstacle);
   const stability = stepThroughTime(problem, nodes, values, obstacle, timeSteps);
-  return { ...readAt(problem.x, x, values, obstacle), stability };
+  const spotIndex = Math.min(Math.max(nodeBelow(x, problem.x), 1), intervals - 1);
+  const firstOrder = isUpwinded(problem, x, nodes.strikeIndex) || isUpwinded(problem, x, spotIndex);
+  return {
+    ...readAt(problem.x, isEverExercised(problem), x, values, obstacle),
+    stability,
+    firstOrder,
+  };
 }
 
 function payoffOf(nodes: AmericanNodes, obstacle: Float64Array): Float64Array {
@@ -112,7 +120,19 @@ function payoffOf(nodes: AmericanNodes, obstacle: Float64Array): Float64Array {
   return values;
 }
 
+/** Exercise earns r·K − q·S on the strike, which is positive for some S < K only then. */
+function isEverExercised({ rate, yield: carry }: AmericanPut): boolean {
+  return rate > 0 || carry < rate;
+}
+
 type Generator = { lower: Float64Array; upper: Float64Array; rate: number };
+
+/** Whether central differences of drift and diffusion would give a cell a negative weight. */
+function isUpwinded(problem: AmericanPut, x: Float64Array, j: number): boolean {
+  const variance = problem.volatility * problem.volatility;
+  const drift = driftOf(problem);
+  return variance < drift * (x[j + 1] - x[j]) || variance < -drift * (x[j] - x[j - 1]);
+}
 
 /** v_t = lower·v[j−1] − (lower + upper + r)·v[j] + upper·v[j+1] at inner node j (index j − 1). */
 function generatorOf(problem: AmericanPut, x: Float64Array): Generator {
@@ -124,11 +144,9 @@ function generatorOf(problem: AmericanPut, x: Float64Array): Generator {
   for (let j = 1; j <= inner; j++) {
     const left = x[j] - x[j - 1];
     const right = x[j + 1] - x[j];
-    const below = variance - drift * right;
-    const above = variance + drift * left;
-    if (below >= 0 && above >= 0) {
-      lower[j - 1] = below / (left * (left + right));
-      upper[j - 1] = above / (right * (left + right));
+    if (!isUpwinded(problem, x, j)) {
+      lower[j - 1] = (variance - drift * right) / (left * (left + right));
+      upper[j - 1] = (variance + drift * left) / (right * (left + right));
     } else {
       // The drift crosses more than the cell can diffuse: difference against it, first order.
       lower[j - 1] = variance / (left * (left + right)) + (drift < 0 ? -drift / left : 0);
@@ -213,13 +231,14 @@ function makeStepper(
 /** Value and derivatives at `at` by six nodes, taken from the side that is not exercised. */
 function readAt(
   at: number,
+  mayExercise: boolean,
   x: Float64Array,
   values: Float64Array,
   obstacle: Float64Array,
-): Omit<AmericanSolution, 'stability'> {
+): Omit<AmericanSolution, 'stability' | 'firstOrder'> {
   const last = x.length - 1;
   const exercisedAt = (j: number) => obstacle[j] > 0 && values[j] - obstacle[j] <= 1e-14;
-  const boundary = boundaryOf(x, values, obstacle, exercisedAt);
+  const boundary = mayExercise ? boundaryOf(x, values, obstacle, exercisedAt) : null;
   const index = nodeBelow(x, at);
   if (at <= x[0] || (exercisedAt(index) && exercisedAt(index + 1))) {
     const spot = exp(at);

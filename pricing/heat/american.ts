@@ -39,7 +39,7 @@ export function priceAmericanOnGrid(
       if (spaceSteps === sizes.spaceSteps) {
         ({ boundary, stability, exercised } = solution);
       }
-      return solution.local;
+      return { ...solution.local, firstOrder: solution.firstOrder };
     },
     sizes.spaceSteps,
     sizes.timeSteps,
@@ -47,7 +47,7 @@ export function priceAmericanOnGrid(
   );
 
   const intrinsic = Math.max(kind === 'put' ? strike - spot : spot - strike, 0);
-  const rounding = 1e-12 * Math.max(strike, spot);
+  const rounding = 1e-12 * Math.max(strike, spot, unit * Math.abs(local.value));
   const errorEstimate = unit * gridError + rounding;
   const diagnostics: Record<string, number> = { stabilityNumber: stability };
   if (boundary !== null)
@@ -61,9 +61,7 @@ export function priceAmericanOnGrid(
   const rateBump = rateBumpOf(market, expiry);
   const rates = bumpedRateSensitivities(market, rateBump, (rate, carry) => {
     const moved = putOf(contract, market, rate, carry);
-    const solve = (spaceSteps: number, timeSteps: number) =>
-      solveAmericanPut(moved, nodesOf(spaceSteps), timeSteps).local;
-    return unit * solve(sizes.spaceSteps, sizes.timeSteps).value;
+    return unit * solveAmericanPut(moved, nodesOf(sizes.spaceSteps), sizes.timeSteps).local.value;
   });
   return {
     value: Math.max(derivatives.value, intrinsic),

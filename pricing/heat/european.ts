@@ -24,10 +24,10 @@ export function priceEuropeanOnGrid(
   const onGrid = z > -reachOf(deviation);
   const { local: heat, errorEstimate: heatError } = refineGrid(
     (spaceSteps, timeSteps) => {
-      if (!onGrid) return { value: 0, first: 0, second: 0 };
+      if (!onGrid) return { value: 0, first: 0, second: 0, firstOrder: false };
       const solution = solveEuropeanHeat(z, deviation, spaceSteps, timeSteps);
       lambda = Math.max(lambda, solution.lambda);
-      return solution.local;
+      return { ...solution.local, firstOrder: false };
     },
     sizes.spaceSteps,
     sizes.timeSteps,

@@ -8,6 +8,7 @@ import {
   rateBumpOf,
 } from '@/pricing/greeks';
 import { plainLocal, powersFor, smoothLocal, type LatticeLocal } from '@/pricing/lattice/local';
+import { defectDoubt } from '@/pricing/lattice/defect';
 import type { MakeWalkStep, WalkStep } from '@/pricing/lattice/walk';
 import { exp } from '@/pricing/numerics/elementary';
 
@@ -21,6 +22,8 @@ export type LatticeValue = Pick<
 
 const fewestExtrapolatedSteps = 16;
 const largestAdvice = 1e6;
+/** ln of the largest price on a walk over the spot; beyond, the exponents leave the doubles. */
+const widestReach = 600;
 
 /**
  * Prices on one kind of walk. `none` is the plain value of the tree with that many steps.
@@ -45,28 +48,27 @@ export function priceOnLattice(
   const plain = smoothing === 'none';
   const walk = lattice.walkAt(steps);
   if (!plain && steps < fewestExtrapolatedSteps) return tooFewForSmoothing();
+  if (market.volatility * Math.sqrt(contract.expiry * steps) > widestReach) return reachTooWide();
   if (walk === null || !lattice.existsAt(plain ? steps : Math.ceil(steps / 4))) {
     return stepTooLong(lattice.existsAt, plain ? 1 : 4);
   }
 
   const smooth = lattice.refined(Math.max(steps, fewestExtrapolatedSteps));
-  const local = plain ? lattice.local(plainLocal, steps) : smooth?.local;
-  if (local === undefined) return stepTooLong(lattice.existsAt, 4);
-  const errorEstimate =
-    smooth === null
-      ? null
-      : smooth.errorEstimate + (plain ? Math.abs(local.value - smooth.local.value) : 0);
+  const local = plain || smooth === null ? lattice.local(plainLocal, steps) : smooth.local;
+  const { value, greeks, exercised } = lattice.valueWithGreeks(local, plain, steps);
+  const doubt = defectDoubt(contract, market, walk, steps, value);
+  const distance = smooth === null ? 0 : Math.abs(local.value - smooth.local.value);
+  const bumped = contract.exercise === 'american' && !exercised;
   return {
     ok: true,
-    ...lattice.valueWithGreeks(local, plain, steps),
-    errorEstimate,
+    value,
+    greeks,
+    errorEstimate: smooth === null ? null : smooth.errorEstimate + distance + doubt,
     diagnostics: {
       upProbability: walk.upProbability,
       upFactor: exp(walk.step),
       downFactor: exp(-walk.step),
-      ...(contract.exercise === 'american' && !local.exercised
-        ? { rateBump: rateBumpOf(market, contract.expiry) }
-        : {}),
+      ...(bumped ? { rateBump: rateBumpOf(market, contract.expiry) } : {}),
     },
   };
 }
@@ -114,7 +116,7 @@ function latticeOf(contract: Contract, market: Market, makeStep: MakeWalkStep) {
     const fine = extrapolate(full, steps, middle, half);
     const coarse = extrapolate(middle, half, local(smoothLocal, quarter), quarter);
     const movement = Math.abs(fine.value - coarse.value);
-    const rounding = 1e-11 * Math.max(spot, strike);
+    const rounding = 1e-11 * Math.max(spot, strike, Math.abs(fine.value));
     return { local: fine, errorEstimate: (american ? 3 : 1) * movement + rounding };
   }
 
@@ -129,7 +131,8 @@ function latticeOf(contract: Contract, market: Market, makeStep: MakeWalkStep) {
   function valueWithGreeks(at: LatticeLocal, plain: boolean, steps: number) {
     const intrinsic = kind === 'call' ? spot - strike : strike - spot;
     if (american && intrinsic > 0 && (at.exercised || at.value <= intrinsic)) {
-      return { value: intrinsic, greeks: greeksOfImmediateExercise(market, kind) };
+      const greeks = greeksOfImmediateExercise(market, kind);
+      return { value: intrinsic, greeks, exercised: true };
     }
     const derivatives = { value: at.value, slope: at.first, curvature: at.second };
     const rates = american
@@ -140,6 +143,7 @@ function latticeOf(contract: Contract, market: Market, makeStep: MakeWalkStep) {
     return {
       value: Math.max(at.value, american ? intrinsic : 0, 0),
       greeks: greeksFromLogDerivatives(market, expiry, derivatives, rates),
+      exercised: false,
     };
   }
 
@@ -168,6 +172,17 @@ function tooFewForSmoothing(): PricingFailure {
     code: 'too-few-steps',
     path: 'method.steps',
     message: `Extrapolation needs at least ${fewestExtrapolatedSteps} steps; raise the steps, or take the plain tree (smoothing none).`,
+  };
+}
+
+function reachTooWide(): PricingFailure {
+  return {
+    ok: false,
+    code: 'numerical-failure',
+    path: 'method.steps',
+    message:
+      'So many steps at this volatility and expiry reach prices beyond what a computer holds; ' +
+      'lower the steps, or price it on the grid.',
   };
 }
 
