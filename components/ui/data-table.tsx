@@ -82,7 +82,9 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
     );
   const alignOf = (id: string) => columns.find((column) => column.id === id)?.align;
   return (
-    <div className={`${plain ? '' : 'table-frame'} ${sticky ? 'table-sticky' : 'table-scroll'}`}>
+    <div
+      className={`${plain ? 'table-plain' : 'table-frame'} ${sticky ? 'table-sticky' : 'table-scroll'}`}
+    >
       <table className="table">
         <caption className="visually-hidden">{caption}</caption>
         <thead>

@@ -9,8 +9,10 @@ export type TextFieldProps = FieldFrameProps & {
   type?: 'text' | 'email' | 'password' | 'date' | 'search';
   /** Follows the typed value, as in `24.5 %`. */
   unit?: string;
-  /** Stands at the right of the value: a resolved date, or a link-button. */
+  /** Stands at the right of the value, such as a resolved date. */
   trailing?: ReactNode;
+  /** Stands at the right of the label: a link-button that helps to fill the field. */
+  labelAction?: ReactNode;
   inputMode?: InputHTMLAttributes<HTMLInputElement>['inputMode'];
   autoComplete?: string;
   placeholder?: string;
@@ -75,6 +77,7 @@ export function TextField(props: TextFieldProps) {
           </span>
         ) : null}
         {trailing ? <span className="field-trailing">{trailing}</span> : null}
+        {props.labelAction ? <span className="field-label-action">{props.labelAction}</span> : null}
       </FieldBox>
       <FieldNotes base={ids.base} hint={hint} error={error} />
     </div>

@@ -4,7 +4,7 @@
  * calendar day. The factors stand in this table only.
  */
 import type { Greeks } from '@/pricing/contract';
-import { alignDecimals, formatNumber, type SignStyle } from './numbers';
+import { alignDecimals, formatNumber, formatPower, type AlignedText } from './numbers';
 
 const perPoint = 1e-2;
 const perBasisPoint = 1e-4;
@@ -35,17 +35,18 @@ export function shownGreeks(greeks: Greeks): ShownGreek[] {
 }
 
 const significantDigits = 4;
-const mostDecimals = 8;
+const mostDecimals = 6;
+/** What six decimals would not show any more is written with a power of ten. */
+const smallestPlain = 1e-5;
 
-/** Decimals that show `significantDigits` of a sensitivity, and never more than `mostDecimals`. */
-function decimalsOf(value: number): number {
-  if (value === 0) return 0;
+function spellSensitivity(value: number): string {
+  if (value === 0) return '0';
+  if (Math.abs(value) < smallestPlain) return formatPower(value, 2);
   const power = Number(value.toExponential(significantDigits - 1).split('e')[1]);
-  return Math.min(mostDecimals, Math.max(0, significantDigits - 1 - power));
+  const decimals = Math.min(mostDecimals, Math.max(0, significantDigits - 1 - power));
+  return formatNumber(value, decimals);
 }
 
-/** A column of sensitivities with four significant digits each, aligned on the point. */
-export const formatSensitivities = (
-  values: readonly number[],
-  sign: SignStyle = 'negative',
-): string[] => alignDecimals(values.map((value) => formatNumber(value, decimalsOf(value), sign)));
+/** A column of sensitivities with up to four significant digits each, aligned on the point. */
+export const formatSensitivities = (values: readonly number[]): AlignedText[] =>
+  alignDecimals(values.map(spellSensitivity));

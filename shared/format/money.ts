@@ -1,5 +1,5 @@
 import Decimal from 'decimal.js';
-import { formatNumber, narrowSpace, type Amount, type SignStyle } from './numbers';
+import { formatNumber, hardSpace, type Amount, type SignStyle } from './numbers';
 
 /** Decimals of a currency's minor unit, from the ISO 4217 table that Intl carries. */
 export const minorUnitDecimals = (currency: string): number =>
@@ -20,4 +20,4 @@ export const formatMoney = (
   amount: Amount,
   currency: string,
   sign: SignStyle = 'negative',
-): string => `${formatAmount(amount, currency, sign)}${narrowSpace}${currency}`;
+): string => `${formatAmount(amount, currency, sign)}${hardSpace}${currency}`;

@@ -1,12 +1,13 @@
 /**
- * How numbers are written on a screen: grouped by a narrow space, signed with a true minus, with
+ * How numbers are written on a screen: grouped by a hard space, signed with a true minus, with
  * a fixed count of decimals so that a column aligns on its point. Display scaling (percent, per
  * point, per day) lives in this folder and nowhere else.
  */
 import Decimal from 'decimal.js';
 
 export const minusSign = '\u2212';
-export const narrowSpace = '\u202f';
+/** Never breaks a line; narrower spaces are missing from the typeface. */
+export const hardSpace = '\u00a0';
 
 export type SignStyle = 'negative' | 'always';
 
@@ -18,7 +19,7 @@ export function spell(formatter: Intl.NumberFormat, amount: Amount): string {
   return formatter
     .formatToParts(amount as number)
     .map(({ type, value }) => {
-      if (type === 'group') return narrowSpace;
+      if (type === 'group') return hardSpace;
       return type === 'minusSign' ? minusSign : value;
     })
     .join('');
@@ -59,7 +60,7 @@ export const valueDecimals = (tolerance: number, priceDecimals: number): number 
   Math.min(12, Math.max(priceDecimals, 1 - leadingPower(tolerance)));
 
 /** Below this an error estimate is written with a power of ten. */
-const smallestPlainError = 1e-5;
+const smallestPlainError = 1e-4;
 
 /** One significant digit, rounded up: an error estimate must not look smaller than it is. */
 export function formatErrorEstimate(errorEstimate: number | null): string {
@@ -67,8 +68,7 @@ export function formatErrorEstimate(errorEstimate: number | null): string {
   if (errorEstimate === 0) return '0';
   const up = new Decimal(errorEstimate).toSignificantDigits(1, Decimal.ROUND_UP);
   if (errorEstimate >= smallestPlainError) return formatNumber(up.toFixed(), up.decimalPlaces());
-  const [digits, exponent] = up.toExponential().split('e');
-  return `${digits}e${exponent.replace('-', minusSign)}`;
+  return formatPower(up.toNumber(), 1);
 }
 
 /** A signed distance with as many decimals as it needs to be told from nought, at least `decimals`. */
@@ -76,32 +76,33 @@ export function formatDifference(difference: number, decimals: number): string {
   if (difference === 0) return '0';
   if (Math.abs(difference) >= 0.5 * 10 ** -decimals)
     return formatNumber(difference, decimals, 'always');
-  const size = formatExponent(Math.abs(difference));
-  return `${difference < 0 ? minusSign : '+'}${size}`;
+  return `${difference < 0 ? '' : '+'}${formatPower(difference, 1)}`;
 }
 
-function formatExponent(size: number): string {
-  const [digits, exponent] = size.toExponential(0).split('e');
-  return `${digits}e${exponent.replace('-', minusSign)}`;
+/** With a power of ten and so many significant digits: −3.4e−9. */
+export function formatPower(value: number, digits: number): string {
+  const [mantissa, exponent] = value.toExponential(digits - 1).split('e');
+  return `${mantissa}e${exponent}`.replace('e+', 'e').replaceAll('-', minusSign);
 }
 
 /** A fraction as percent, with the decimals it has and at least `minDecimals`: 0.245 → 24.5 %. */
 export const formatPercent = (fraction: number, minDecimals = 2): string =>
-  `${formatQuantity(new Decimal(fraction).times(100).toFixed(), minDecimals, 6)}${narrowSpace}%`;
+  `${formatQuantity(new Decimal(fraction).times(100).toFixed(), minDecimals, 6)}${hardSpace}%`;
 
-const figureSpace = '\u2007';
-const punctuationSpace = '\u2008';
+export type AlignedText = {
+  text: string;
+  /** Figures to be drawn unseen after the text, so that its point stands where the others do. */
+  padding: string;
+};
 
-/** Pads texts on the right so that their points stand below each other in tabular figures. */
-export function alignDecimals(texts: readonly string[]): string[] {
-  const decimalsOf = (text: string) => {
-    const point = text.indexOf('.');
-    return point < 0 ? 0 : text.length - point - 1;
-  };
-  const widest = Math.max(0, ...texts.map(decimalsOf));
-  return texts.map((text) => {
-    const decimals = decimalsOf(text);
-    const point = decimals === 0 && widest > 0 ? punctuationSpace : '';
-    return text + point + figureSpace.repeat(widest - decimals);
-  });
+/** Aligns texts of different decimals on their points, in figures of one width. */
+export function alignDecimals(texts: readonly string[]): AlignedText[] {
+  const tails = texts.map((text) => (text.includes('.') ? text.slice(text.indexOf('.')) : ''));
+  const widest = Math.max(0, ...tails.map(({ length }) => length));
+  return texts.map((text, index) => ({
+    text,
+    padding: (tails[index] === '' ? '.' : '')
+      .concat('0'.repeat(widest))
+      .slice(0, widest - tails[index].length),
+  }));
 }

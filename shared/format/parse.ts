@@ -92,3 +92,10 @@ export const percentText = (fraction: number, minDecimals = 0): string => {
   if (decimals >= minDecimals) return text;
   return `${text}${decimals === 0 ? '.' : ''}${'0'.repeat(minDecimals - decimals)}`;
 };
+
+/** A solved number as it is put into a field: rounded, without trailing noughts. */
+export const roundedNumberText = (value: number, decimals: number): string =>
+  new Decimal(value).toDecimalPlaces(decimals).toFixed();
+
+export const roundedPercentText = (fraction: number, decimals: number): string =>
+  percentText(new Decimal(fraction).toDecimalPlaces(decimals + 2).toNumber());

@@ -30,11 +30,16 @@ describe('the Greeks on a screen', () => {
     expect(labels).not.toContain('vanna');
   });
 
-  it('show four significant digits, aligned on the point', () => {
-    expect(formatSensitivities([-0.4438, 123.456, 0.0107])).toEqual([
-      '\u22120.4438\u2007',
-      '123.5\u2007\u2007\u2007\u2007',
-      '0.01070',
+  it('show up to four significant digits, aligned on the point', () => {
+    expect(formatSensitivities([-0.4438, 123.456, 0.0107, 0])).toEqual([
+      { text: '\u22120.4438', padding: '0' },
+      { text: '123.5', padding: '0000' },
+      { text: '0.01070', padding: '' },
+      { text: '0', padding: '.00000' },
     ]);
+  });
+
+  it('are written with a power of ten where decimals would hide them', () => {
+    expect(formatSensitivities([-8.428e-9])[0].text).toBe('\u22128.4e\u22129');
   });
 });

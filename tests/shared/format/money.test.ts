@@ -13,8 +13,8 @@ describe('money', () => {
   });
 
   it('is rounded to the minor unit, halves away from zero', () => {
-    expect(formatMoney('-66171.505', 'EUR')).toBe('\u221266\u202f171.51\u202fEUR');
-    expect(formatMoney('1234567.5', 'JPY')).toBe('1\u202f234\u202f568\u202fJPY');
+    expect(formatMoney('-66171.505', 'EUR')).toBe('\u221266\u00a0171.51\u00a0EUR');
+    expect(formatMoney('1234567.5', 'JPY')).toBe('1\u00a0234\u00a0568\u00a0JPY');
     expect(formatAmount('0.125', 'EUR', 'always')).toBe('+0.13');
   });
 });

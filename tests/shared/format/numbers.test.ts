@@ -7,16 +7,16 @@ import {
   formatPercent,
   formatQuantity,
   minusSign,
-  narrowSpace,
+  hardSpace,
   valueDecimals,
 } from '@/shared/format/numbers';
 
 const plain = (text: string) =>
-  text.replaceAll(narrowSpace, '').replaceAll(minusSign, '-').replace('%', '');
+  text.replaceAll(hardSpace, '').replaceAll(minusSign, '-').replace('%', '');
 
 describe('numbers on a screen', () => {
-  it('groups by a narrow space and signs with a true minus', () => {
-    expect(formatNumber(-66171.5, 2)).toBe('\u221266\u202f171.50');
+  it('groups by a hard space and signs with a true minus', () => {
+    expect(formatNumber(-66171.5, 2)).toBe('\u221266\u00a0171.50');
     expect(formatNumber(13.23427, 4)).toBe('13.2343');
     expect(formatNumber(0.0001, 4, 'always')).toBe('+0.0001');
   });
@@ -28,7 +28,7 @@ describe('numbers on a screen', () => {
 
   it('takes decimal strings beyond the reach of a double', () => {
     expect(formatQuantity('123456789012345.0000000001')).toBe(
-      '123\u202f456\u202f789\u202f012\u202f345.0000000001',
+      '123\u00a0456\u00a0789\u00a0012\u00a0345.0000000001',
     );
   });
 
@@ -52,8 +52,8 @@ describe('numbers on a screen', () => {
   });
 
   it('writes percent with the digits that the fraction has', () => {
-    expect(formatPercent(0.245)).toBe('24.50\u202f%');
-    expect(formatPercent(-0.0012345)).toBe('\u22120.12345\u202f%');
+    expect(formatPercent(0.245)).toBe('24.50\u00a0%');
+    expect(formatPercent(-0.0012345)).toBe('\u22120.12345\u00a0%');
   });
 });
 
@@ -63,6 +63,7 @@ describe('error estimates', () => {
     [0.0003, '0.0003'],
     [2e-7, '2e\u22127'],
     [1.01e-13, '2e\u221213'],
+    [0.00001, '1e\u22125'],
     [0.96, '1'],
     [9.6e-6, '1e\u22125'],
     [12, '20'],
@@ -94,11 +95,14 @@ describe('differences', () => {
 
 describe('alignDecimals', () => {
   it('puts every point at the same distance from the right', () => {
-    const texts = alignDecimals(['12.5', '\u22123', '0.0107']);
-    expect(texts).toEqual([
-      '12.5\u2007\u2007\u2007',
-      '\u22123\u2008\u2007\u2007\u2007\u2007',
-      '0.0107',
+    expect(alignDecimals(['12.5', '\u22123', '0.0107'])).toEqual([
+      { text: '12.5', padding: '000' },
+      { text: '\u22123', padding: '.0000' },
+      { text: '0.0107', padding: '' },
+    ]);
+    expect(alignDecimals(['5', '7'])).toEqual([
+      { text: '5', padding: '' },
+      { text: '7', padding: '' },
     ]);
   });
 });
