@@ -24,7 +24,7 @@ export function powersFor(walk: WalkStep, steps: number): Float64Array {
 
 /** The stated tree, every node of it; derivatives by its three nodes of now. */
 export function plainLocal({ terms, walk, steps, powers }: LatticeRun): LatticeLocal {
-  const values = rollBack(terms, walk, powers, steps, plainLead, 0, Infinity);
+  const values = rollBack(terms, walk, powers, steps, plainLead, 0, null);
   const x = Float64Array.of(-2 * walk.step, 0, 2 * walk.step);
   const { first, second } = interpolate(x, values, 0, 3, 0);
   return { value: values[1], first, second, exercised: isExercised(terms, values[1], 0) };

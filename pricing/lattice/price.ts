@@ -33,7 +33,7 @@ const widestReach = 600;
  * error; American ones wander, and three times the distance covers them. (Measured on 240 random
  * American options against a grid of 1600 × 800, 250 to 2000 steps: it covers the error in 96 to
  * 99 % of them and is within thirty times it in 96 to 98 %.) The estimate of a plain tree is its
- * distance from that refined value, plus the latter's own.
+ * distance from a refined value, plus the latter's own.
  *
  * Rho and the yield's sensitivity of an American option are central differences of the value on
  * walks of the same number of steps; everything else comes from the walk itself.
@@ -53,7 +53,7 @@ export function priceOnLattice(
     return stepTooLong(lattice.existsAt, plain ? 1 : 4);
   }
 
-  const smooth = lattice.refined(Math.max(steps, fewestExtrapolatedSteps));
+  const smooth = lattice.refined(plain ? judgeSteps(steps) : steps);
   const local = plain || smooth === null ? lattice.local(plainLocal, steps) : smooth.local;
   const { value, greeks, exercised } = lattice.valueWithGreeks(local, plain, steps);
   const doubt = defectDoubt(contract, market, walk, steps, value);
@@ -71,6 +71,11 @@ export function priceOnLattice(
       ...(bumped ? { rateBump: rateBumpOf(market, contract.expiry) } : {}),
     },
   };
+}
+
+/** A plain tree is judged by a refined value of four times its steps, as long as that is cheap. */
+function judgeSteps(steps: number): number {
+  return Math.max(fewestExtrapolatedSteps, steps, Math.min(4 * steps, 1000));
 }
 
 type Read = typeof plainLocal;

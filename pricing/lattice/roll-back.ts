@@ -10,8 +10,8 @@ import type { WalkStep } from '@/pricing/lattice/walk';
  * gamma at the present instant, and the value at the spot for a walk whose nodes are shifted.
  *
  * Nodes that the walk from around the spot meets with a probability below 1e-11 are not rolled
- * (`deviations` of its spread on both sides of its mean): work n^1.5 instead of n². Infinity rolls
- * every node.
+ * (`deviations` of its spread on both sides of its mean): work n^1.5 instead of n². Null rolls every
+ * node.
  */
 export type RollBackTerms = {
   spot: number;
@@ -35,7 +35,7 @@ export function rollBack(
   steps: number,
   lead: number,
   shift: number,
-  deviations: number,
+  deviations: number | null,
 ): Float64Array {
   const last = steps + lead;
   const ladders = payoffLadders(terms, powers, last, shift);
@@ -45,7 +45,7 @@ export function rollBack(
   const { up, down, upProbability: p } = walk;
   for (let level = last - 1; level >= lead; level--) {
     const age = level - lead;
-    const spread = deviations * Math.sqrt(age * p * (1 - p)) + 1;
+    const spread = deviations === null ? level : deviations * Math.sqrt(age * p * (1 - p)) + 1;
     const low = Math.max(0, Math.floor(age * p - spread));
     const high = Math.min(level, Math.ceil(age * p + spread) + lead);
     let here = values[low];
