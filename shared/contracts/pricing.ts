@@ -4,6 +4,7 @@ import {
   methodNames,
   optionKinds,
   pricedExercises,
+  pricingIssueCodes,
   verdicts,
   type Greeks,
   type Market,
@@ -80,7 +81,7 @@ export const routeResultSchema = z.discriminatedUnion('ok', [
   }),
   z.object({
     ok: z.literal(false),
-    code: z.string().describe('Kind of failure'),
+    code: z.enum(pricingIssueCodes).describe('Kind of failure'),
     path: z.string().describe('Field that is to blame'),
     message: z.string().describe('What to do, in a sentence'),
   }),
