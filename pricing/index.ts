@@ -20,6 +20,7 @@ import { judgeRoutes, type ComparedRoute, type RouteVerdict } from '@/pricing/ve
 
 export { checkRequest } from '@/pricing/contract';
 export type { Solved } from '@/pricing/implied/solved';
+export type { Solved } from '@/pricing/implied/solved';
 export type { RouteVerdict, WorstPair } from '@/pricing/verdict';
 
 /** Recorded with every stored value; raised whenever any value could come out differently. */
@@ -78,4 +79,20 @@ export function impliedVolatility(request: PricingRequest, premium: number): Sol
 /** The strike at which the request has the delta; the request's own plays no part. */
 export function strikeForDelta(request: PricingRequest, delta: number): Solved {
   return solveStrikeForDelta(request, delta, price);
+}
+
+/** The volatility at which the request is worth the premium; the volatility it carries is not read. */
+export function impliedVolatility(request: PricingRequest, premium: number): Solved {
+  const market = { ...request.market, volatility: 0.2 };
+  const checked = checkRequest({ ...request, market });
+  if (!checked.ok) return { ok: false, ...checked.issues[0] };
+  return solveImpliedVolatility(checked.request, premium, price);
+}
+
+/** The strike at which the request has the delta; the strike it carries is not read. */
+export function strikeForDelta(request: PricingRequest, delta: number): Solved {
+  const contract = { ...request.contract, strike: request.market.spot };
+  const checked = checkRequest({ ...request, contract });
+  if (!checked.ok) return { ok: false, ...checked.issues[0] };
+  return solveStrikeForDelta(checked.request, delta, price);
 }
