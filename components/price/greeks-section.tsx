@@ -84,7 +84,7 @@ const columnsOf = (currency: string): Column<GreekLine>[] => [
 ];
 
 const styles = StyleSheet.create({
-  section: { paddingBottom: space.xs },
+  section: { flexGrow: 1, paddingBottom: space.xs },
   table: { marginHorizontal: -space.lg },
   unseen: { visibility: 'hidden', userSelect: 'none' } as object,
 });

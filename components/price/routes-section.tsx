@@ -1,5 +1,4 @@
 import { StyleSheet, View } from 'react-native';
-import Svg from 'react-native-svg';
 import { findingOf } from '@/components/charts/agreement-finding';
 import { RouteDot } from '@/components/charts/route-dot';
 import { Section } from '@/components/ui/card';
@@ -69,9 +68,9 @@ function RouteName({ route: { name, result } }: { route: Route }) {
   const sizes = result.ok ? routeSizes(result.method) : '';
   return (
     <View style={styles.route}>
-      <Svg width={12} height={12} aria-hidden>
+      <svg width={12} height={12} aria-hidden>
         <RouteDot name={name} x={6} y={6} r={4} />
-      </Svg>
+      </svg>
       <View style={styles.name}>
         <Text>{routeLabel(name)}</Text>
         {sizes ? (
@@ -107,7 +106,7 @@ export function RouteWarnings({ evidence }: { evidence: Evidence }) {
 }
 
 const styles = StyleSheet.create({
-  section: { paddingBottom: space.md },
+  section: { flexGrow: 1, paddingBottom: space.md },
   table: { marginHorizontal: -space.lg },
   route: { flexDirection: 'row', alignItems: 'center', gap: space.sm },
   name: { flexShrink: 1 },

@@ -36,7 +36,7 @@ export function QuoteCard({ quote, desk }: { quote: QuoteSummary; desk: DeskAcce
           ± {formatErrorEstimate(quote.errorEstimate)}
         </Text>
       </View>
-      <View style={styles.line}>
+      <View style={[styles.line, styles.centred]}>
         <AgreementStrip {...agreement} size="row" />
         <Text tabular weight="medium" style={styles.end}>
           {formatMoney(quote.total, underlying.currency, 'always')}
@@ -54,5 +54,6 @@ const styles = StyleSheet.create({
     alignItems: 'baseline',
     columnGap: space.sm,
   },
+  centred: { alignItems: 'center' },
   end: { marginLeft: 'auto' },
 });

@@ -1,26 +1,20 @@
 import { useEffect, useState } from 'react';
 import { StyleSheet, View } from 'react-native';
-import { AgreementStrip } from '@/components/charts/agreement-strip';
 import { Button } from '@/components/ui/button';
-import { DataTable, type Column } from '@/components/ui/data-table';
+import { DataTable } from '@/components/ui/data-table';
 import { Screen } from '@/components/ui/screen';
 import { SelectField } from '@/components/ui/select-field';
 import { EmptyState, ErrorState, SkeletonRows } from '@/components/ui/states';
 import { TextField } from '@/components/ui/text-field';
-import { Text } from '@/components/ui/text';
 import { agreementText } from '@/constants/texts/agreement';
 import { quotesText } from '@/constants/texts/quotes';
 import { space } from '@/constants/theme';
 import { verdicts } from '@/pricing/contract';
-import type { QuoteSummary } from '@/shared/contracts/quotes';
 import type { DeskAccess } from '@/shared/contracts/sessions';
-import { formatInstant } from '@/shared/format/dates';
-import { formatMoney } from '@/shared/format/money';
-import { formatErrorEstimate, formatNumber } from '@/shared/format/numbers';
 import { errorOf } from '@/hooks/error-of';
 import { useQuotes, type QuoteFilter } from '@/hooks/use-quotes';
 import { QuoteCard } from './quote-card';
-import { summaryAgreement, summaryTerms } from './quote-summary';
+import { quoteColumns } from './quote-columns';
 
 export type QuoteListScreenProps = {
   desk: DeskAccess;
@@ -92,7 +86,7 @@ function QuoteRows({ desk, filter, onFilter }: QuoteListScreenProps) {
       <DataTable
         sticky
         caption={quotesText.caption}
-        columns={columnsOf(desk)}
+        columns={quoteColumns(desk)}
         rows={rows}
         rowId={({ id }) => id}
         rowHref={({ id }) => `/desks/${desk.id}/quotes/${id}`}
@@ -141,45 +135,6 @@ function NoQuotes({ desk, filter, onFilter }: QuoteListScreenProps) {
     />
   );
 }
-
-const columnsOf = (desk: DeskAccess): Column<QuoteSummary>[] => [
-  { id: 'number', header: quotesText.number, cell: ({ number }) => number },
-  { id: 'terms', header: quotesText.terms, cell: (quote) => summaryTerms(quote) },
-  {
-    id: 'value',
-    header: quotesText.value,
-    align: 'end',
-    cell: (quote) => formatNumber(quote.value, summaryAgreement(quote).decimals),
-  },
-  {
-    id: 'error',
-    header: quotesText.error,
-    align: 'end',
-    cell: ({ errorEstimate }) => (
-      <Text tone="muted" tabular>
-        {formatErrorEstimate(errorEstimate)}
-      </Text>
-    ),
-  },
-  {
-    id: 'agreement',
-    header: quotesText.agreement,
-    cell: (quote) => <AgreementStrip {...summaryAgreement(quote)} size="row" />,
-  },
-  {
-    id: 'total',
-    header: quotesText.total,
-    align: 'end',
-    cell: ({ total, underlying }) => formatMoney(total, underlying.currency, 'always'),
-  },
-  { id: 'by', header: quotesText.by, cell: ({ createdBy }) => createdBy.name },
-  {
-    id: 'at',
-    header: quotesText.at,
-    align: 'end',
-    cell: ({ createdAt }) => formatInstant(createdAt, desk.timeZone),
-  },
-];
 
 const styles = StyleSheet.create({
   filters: { flexDirection: 'row', flexWrap: 'wrap', gap: space.sm },

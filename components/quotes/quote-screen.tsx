@@ -1,13 +1,16 @@
 import { StyleSheet, View } from 'react-native';
-import { AnswerCard, positionWords } from '@/components/price/answer-card';
+import { AnswerCard } from '@/components/price/answer-card';
 import { CautionsSection } from '@/components/price/cautions';
 import type { Evidence } from '@/components/price/evidence';
 import { GreeksSection } from '@/components/price/greeks-section';
 import { RoutesSection } from '@/components/price/routes-section';
+import { ActionBar } from '@/components/ui/action-bar';
 import { Button } from '@/components/ui/button';
 import { Link } from '@/components/ui/link';
 import { Screen } from '@/components/ui/screen';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
+import { Text } from '@/components/ui/text';
+import { useWide } from '@/components/ui/use-wide';
 import { quotesText } from '@/constants/texts/quotes';
 import { space } from '@/constants/theme';
 import type { Quote } from '@/shared/contracts/quotes';
@@ -47,23 +50,23 @@ const evidenceOf = (quote: Quote): Evidence => ({
 /** One quote and everything that it rests on, from top to bottom. */
 function QuotePage({ desk, quote }: { desk: DeskAccess; quote: Quote }) {
   const evidence = evidenceOf(quote);
-  const mayPrice = desk.permissions.includes('price');
+  const wide = useWide();
+  const termsButton = desk.permissions.includes('price') ? (
+    <Button
+      grow
+      kind="secondary"
+      label={quotesText.useTerms}
+      href={`/desks/${desk.id}/ticket?from=${quote.id}`}
+    />
+  ) : null;
   return (
     <Screen
       title={quotesText.quote(quote.number)}
       measure={1240}
       overline={<Link href={`/desks/${desk.id}/quotes`}>{quotesText.back}</Link>}
-      subtitle={`${summaryTerms(quote)} · ${positionWords(quote, quote.underlying.unit)}`}
-      actions={
-        mayPrice ? (
-          <Button
-            kind="secondary"
-            label={quotesText.useTerms}
-            href={`/desks/${desk.id}/ticket?from=${quote.id}`}
-          />
-        ) : undefined
-      }
+      actions={wide ? termsButton : undefined}
     >
+      <Text tone="muted">{summaryTerms(quote)}</Text>
       <AnswerCard evidence={evidence} />
       <View style={styles.pair}>
         <View style={styles.half}>
@@ -83,6 +86,7 @@ function QuotePage({ desk, quote }: { desk: DeskAccess; quote: Quote }) {
         </View>
       </View>
       <CautionsSection evidence={evidence} />
+      {wide || !termsButton ? null : <ActionBar>{termsButton}</ActionBar>}
     </Screen>
   );
 }
