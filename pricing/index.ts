@@ -20,7 +20,6 @@ import { judgeRoutes, type ComparedRoute, type RouteVerdict } from '@/pricing/ve
 
 export { checkRequest } from '@/pricing/contract';
 export type { Solved } from '@/pricing/implied/solved';
-export type { Solved } from '@/pricing/implied/solved';
 export type { RouteVerdict, WorstPair } from '@/pricing/verdict';
 
 /** Recorded with every stored value; raised whenever any value could come out differently. */
@@ -69,16 +68,6 @@ export function compareRoutes(routes: readonly PricedRoute[], tolerance: number)
     compared.push({ name, value, errorEstimate, machinery: methodNamed(name).machinery });
   }
   return judgeRoutes(compared, tolerance);
-}
-
-/** The volatility at which the request is worth the premium; the request's own plays no part. */
-export function impliedVolatility(request: PricingRequest, premium: number): Solved {
-  return solveImpliedVolatility(request, premium, price);
-}
-
-/** The strike at which the request has the delta; the request's own plays no part. */
-export function strikeForDelta(request: PricingRequest, delta: number): Solved {
-  return solveStrikeForDelta(request, delta, price);
 }
 
 /** The volatility at which the request is worth the premium; the volatility it carries is not read. */

@@ -34,7 +34,8 @@ const SMALLEST_NORMAL = 2.2250738585072014e-308;
 const SAFETY = 1.7;
 
 /** The numbers that value, Greeks and error share; the names are those of the formula above. */
-type Terms = Legs & {
+type Terms = {
+  legs: Legs;
   s: number;
   d1: number;
   d2: number;
@@ -49,7 +50,7 @@ function termsOf(contract: Contract, market: Market): Terms {
   const rootExpiry = Math.sqrt(contract.expiry);
   const s = market.volatility * rootExpiry;
   return {
-    ...legs,
+    legs,
     s,
     d1: x / s + 0.5 * s,
     d2: x / s - 0.5 * s,
@@ -59,21 +60,23 @@ function termsOf(contract: Contract, market: Market): Terms {
 }
 
 function valueOf(terms: Terms): number {
-  const { sign, x, extrinsic } = terms;
-  return sign * x > 0 ? forwardGain(terms) + extrinsic : extrinsic;
+  const { legs, extrinsic } = terms;
+  return legs.sign * legs.x > 0 ? forwardGain(legs) + extrinsic : extrinsic;
 }
 
 function greeksOf(contract: Contract, market: Market, terms: Terms, value: number): Greeks {
-  const { sign, legA, legB, s, d1, d2, rootExpiry, yieldDiscount, carry } = terms;
+  const { s, d1, d2, rootExpiry } = terms;
+  const { sign, legA, legB, yieldDiscount, carry } = terms.legs;
   const { rate, spot, volatility } = market;
   const { expiry } = contract;
   const density = normalDensity(d1);
-  const spotPart = sign * legA * normalCdf(sign * d1);
+  const delta = sign * yieldDiscount * normalCdf(sign * d1);
+  const spotPart = spot * delta;
   const strikePart = sign * legB * normalCdf(sign * d2);
   const vega = legA * density * rootExpiry;
   const isFuture = 'carry' in market;
   return {
-    delta: sign * yieldDiscount * normalCdf(sign * d1),
+    delta,
     gamma: (yieldDiscount * density) / (spot * s),
     vega,
     theta: (-0.5 * vega * volatility) / expiry + (carry - rate) * spotPart + rate * value,
@@ -86,7 +89,8 @@ function greeksOf(contract: Contract, market: Market, terms: Terms, value: numbe
 
 /** See the opening comment; each entry is one rounding error seen in the value. */
 function errorOf(contract: Contract, market: Market, terms: Terms, value: number): number {
-  const { sign, legA, legB, logSpotStrike, drift, x, s, carry, extrinsic } = terms;
+  const { s, extrinsic } = terms;
+  const { sign, legA, legB, logSpotStrike, drift, x, carry } = terms.legs;
   const distance = -Math.abs(x);
   const a = distance / s + 0.5 * s;
   const small = Math.min(legA, legB);
@@ -130,7 +134,7 @@ function price(contract: Contract, market: Market): PricingResult {
     errorEstimate: errorOf(contract, market, terms, value),
     greeks: greeksOf(contract, market, terms, value),
     method: { name: 'closed-form' },
-    diagnostics: { d1: terms.d1, d2: terms.d2, forward: market.spot * exp(terms.drift) },
+    diagnostics: { d1: terms.d1, d2: terms.d2, forward: market.spot * exp(terms.legs.drift) },
     warnings: [],
   };
 }
