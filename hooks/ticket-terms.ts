@@ -2,11 +2,18 @@
  * Reads a ticket: from the texts that stand there to terms that can be priced, or to one sentence
  * at each field that stops it. Pure; the engine's own check has the last word on ranges.
  */
-import { checkRequest, type Market, type PricingRequest } from '@/pricing/contract';
+import {
+  checkRequest,
+  numberLimits,
+  type Market,
+  type PricingIssue,
+  type PricingRequest,
+} from '@/pricing/contract';
 import { decimalSchema } from '@/shared/contracts/common';
 import type { QuoteTerms } from '@/shared/contracts/quotes';
 import type { Underlying } from '@/shared/contracts/underlyings';
 import { addDays, dateInZone, dateOfTenor, isCalendarDate } from '@/shared/dates';
+import { formatPercent, formatQuantity } from '@/shared/format/numbers';
 import { parseDecimal, parseNumber, parsePercent, type Parsed } from '@/shared/format/parse';
 import { expiryInstantMs, pricingRequestOf, type DeskClock } from '@/shared/quote-terms';
 import { ticketText } from '@/constants/texts/ticket';
@@ -142,6 +149,53 @@ export function placeIssues(issues: readonly { path: string; message: string }[]
   return { errors, elsewhere };
 }
 
+/**
+ * The engine speaks of decimals and years, a ticket of percent and dates: what lies outside the
+ * limits is said in the ticket's own units.
+ */
+function limitMessage(field: TicketField, { code, message }: PricingIssue, value: number): string {
+  if (code !== 'out-of-range' && code !== 'not-positive') return message;
+  switch (field) {
+    case 'expiry':
+      return value > numberLimits.expiry.max
+        ? ticketText.tooFar(numberLimits.expiry.max)
+        : ticketText.tooNear;
+    case 'rate':
+    case 'yield':
+      return ticketText.outside(
+        formatPercent(numberLimits[field].min, 0),
+        formatPercent(numberLimits[field].max, 0),
+      );
+    case 'strike':
+    case 'spot':
+    case 'volatility': {
+      if (value <= 0) return ticketText.notPositive[field];
+      const spell =
+        field === 'volatility' ? (limit: number) => formatPercent(limit, 0) : formatQuantity;
+      const { min, max } = numberLimits[field];
+      return value > max ? ticketText.tooLarge(spell(max)) : ticketText.tooSmall(spell(min));
+    }
+    default:
+      return message;
+  }
+}
+
+const valueAt = ({ contract, market }: PricingRequest, field: TicketField): number => {
+  if (field === 'strike' || field === 'expiry') return contract[field];
+  if (field === 'yield') return 'carry' in market ? NaN : market.yield;
+  return field === 'spot' || field === 'rate' || field === 'volatility' ? market[field] : NaN;
+};
+
+/** The engine's complaints at the fields of the ticket. */
+function engineErrors(request: PricingRequest, issues: readonly PricingIssue[]) {
+  const worded = issues.map((issue) => {
+    const field = ticketFieldOf(issue.path);
+    const message = field ? limitMessage(field, issue, valueAt(request, field)) : issue.message;
+    return { path: issue.path, message };
+  });
+  return placeIssues(worded);
+}
+
 export function readTicket(
   draft: TicketDraft,
   underlying: Underlying | null,
@@ -174,7 +228,7 @@ export function readTicket(
   };
   const provisional = pricingRequestOf(terms, desk);
   const checked = checkRequest(provisional);
-  const placed = placeIssues(checked.ok ? [] : checked.issues);
+  const placed = engineErrors(provisional, checked.ok ? [] : checked.issues);
   const all: FieldErrors = { ...placed.errors, ...errors };
   // A complaint about no field of the ticket would stop the price without saying why.
   const [unplaced] = placed.elsewhere;

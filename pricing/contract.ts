@@ -10,7 +10,7 @@
 import type { methodNames, optionKinds, pricedExercises } from './names';
 
 export { checkRequest } from './check-request';
-export { yearFraction } from './conventions';
+export { numberLimits, yearFraction } from './conventions';
 export { exercises, methodNames, optionKinds, payoffs, pricedExercises } from './names';
 
 export type OptionKind = (typeof optionKinds)[number];
