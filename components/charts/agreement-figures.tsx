@@ -1,5 +1,4 @@
 import { StyleSheet, View } from 'react-native';
-import Svg from 'react-native-svg';
 import { agreementText } from '@/constants/texts/agreement';
 import { space } from '@/constants/theme';
 import { DataTable, type Column } from '@/components/ui/data-table';
@@ -16,9 +15,9 @@ const columnsOf = ({ routes, decimals, currency }: Agreement): Column<StripRoute
     header: agreementText.route,
     cell: ({ name, label }) => (
       <View style={styles.route}>
-        <Svg width={12} height={12} aria-hidden>
+        <svg width={12} height={12} aria-hidden>
           <RouteDot name={name} x={6} y={6} r={4} />
-        </Svg>
+        </svg>
         <Text>{label}</Text>
       </View>
     ),

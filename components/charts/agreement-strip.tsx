@@ -1,6 +1,5 @@
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
-import Svg, { Line, Rect } from 'react-native-svg';
 import { color, space } from '@/constants/theme';
 import { agreementText } from '@/constants/texts/agreement';
 import { Text } from '@/components/ui/text';
@@ -13,9 +12,19 @@ import { BeyondArrow, RouteDot, routeLook } from './route-dot';
 export type AgreementStripProps = Agreement & { size: 'row' | 'card' };
 
 const sizes = {
-  row: { height: () => 24, radius: (lanes: number) => (lanes > 3 ? 2.2 : 2.8), margin: 5 },
-  card: { height: (lanes: number) => 22 * lanes + 12, radius: () => 4, margin: 9 },
+  row: {
+    height: () => 24,
+    top: 5,
+    laneGap: (lanes: number) => 13 / Math.max(1, lanes - 1),
+    margin: 5,
+  },
+  card: { height: (lanes: number) => 22 * lanes + 8, top: 12, laneGap: () => 22, margin: 9 },
 } as const;
+
+const radiusOf = (size: 'row' | 'card', lanes: number) => {
+  if (size === 'card') return 4;
+  return lanes > 3 ? 2.2 : 2.8;
+};
 
 const rowWidth = 120;
 const labelWidth = 88;
@@ -77,30 +86,26 @@ type StripDrawingProps = { agreement: Agreement; size: 'row' | 'card'; width: nu
 
 function StripDrawing({ agreement, size, width }: StripDrawingProps) {
   const lanes = agreement.routes.length;
-  const height = sizes[size].height(lanes);
-  const { band, routes } = layOutStrip(agreement, width, sizes[size].margin);
-  const gap = (height - 2) / (lanes + (size === 'row' ? 0.6 : 0.55));
-  const top = (height - gap * (lanes - 1)) / 2;
+  const { height: heightOf, top, laneGap, margin } = sizes[size];
+  const height = heightOf(lanes);
+  const { band, routes } = layOutStrip(agreement, width, margin);
+  // One lane stands in the middle; several hang from the top, above the axis at the foot.
+  const laneAt = (lane: number) => (lanes === 1 ? height / 2 - 1 : top + laneGap(lanes) * lane);
   return (
-    <Svg width={width} height={height} aria-hidden>
-      <Line x1={0} x2={width} y1={height / 2} y2={height / 2} stroke={color.line} />
-      <Rect
+    <svg width={width} height={height} aria-hidden>
+      <rect
         x={band.from}
         y={0}
         width={band.to - band.from}
-        height={height}
+        height={height - 1}
         rx={3}
         fill={color.lakeSoft}
       />
+      <line x1={0} x2={width} y1={height - 0.75} y2={height - 0.75} stroke={color.edge} />
       {routes.map((route, lane) => (
-        <RouteMark
-          key={route.name}
-          route={route}
-          y={top + gap * lane}
-          radius={sizes[size].radius(lanes)}
-        />
+        <RouteMark key={route.name} route={route} y={laneAt(lane)} radius={radiusOf(size, lanes)} />
       ))}
-    </Svg>
+    </svg>
   );
 }
 
@@ -114,12 +119,12 @@ function RouteMark({ route, y, radius }: { route: PlacedRoute; y: number; radius
     <>
       {whisker && whisker.to - whisker.from > 2 * radius ? (
         <>
-          <Line x1={whisker.from} x2={whisker.to} y1={y} y2={y} strokeDasharray={dash} {...line} />
+          <line x1={whisker.from} x2={whisker.to} y1={y} y2={y} strokeDasharray={dash} {...line} />
           {whisker.openFrom ? null : (
-            <Line x1={whisker.from} x2={whisker.from} y1={y - cap} y2={y + cap} {...line} />
+            <line x1={whisker.from} x2={whisker.from} y1={y - cap} y2={y + cap} {...line} />
           )}
           {whisker.openTo ? null : (
-            <Line x1={whisker.to} x2={whisker.to} y1={y - cap} y2={y + cap} {...line} />
+            <line x1={whisker.to} x2={whisker.to} y1={y - cap} y2={y + cap} {...line} />
           )}
         </>
       ) : null}
@@ -131,7 +136,7 @@ function RouteMark({ route, y, radius }: { route: PlacedRoute; y: number; radius
 const styles = StyleSheet.create({
   row: { flexDirection: 'row', alignItems: 'center', gap: space.md },
   card: { flexDirection: 'row', gap: space.sm, width: '100%' },
-  labels: { width: labelWidth, justifyContent: 'space-around', paddingVertical: 4 },
-  label: { textAlign: 'left', lineHeight: 20 },
-  axis: { flex: 1, minWidth: 0 },
+  labels: { width: labelWidth, paddingTop: 1 },
+  label: { textAlign: 'left', lineHeight: 22 },
+  axis: { flex: 1, minWidth: 0, maxWidth: 420 },
 });

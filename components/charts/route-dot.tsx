@@ -1,4 +1,3 @@
-import { Circle, Path } from 'react-native-svg';
 import { color } from '@/constants/theme';
 
 type Shape = 'circle' | 'diamond' | 'square' | 'triangle' | 'ring';
@@ -22,10 +21,10 @@ export function RouteDot({ name, x, y, r }: { name: string; x: number; y: number
     square: `M${x - 0.9 * r} ${y - 0.9 * r}h${1.8 * r}v${1.8 * r}h${-1.8 * r}z`,
     triangle: `M${x} ${y - 1.2 * r}L${x + 1.2 * r} ${y + r}H${x - 1.2 * r}z`,
   };
-  if (shape === 'circle') return <Circle cx={x} cy={y} r={r} fill={ink} />;
+  if (shape === 'circle') return <circle cx={x} cy={y} r={r} fill={ink} />;
   if (shape === 'ring')
-    return <Circle cx={x} cy={y} r={r} fill={color.surface} stroke={ink} strokeWidth={1.5} />;
-  return <Path d={paths[shape]} fill={ink} />;
+    return <circle cx={x} cy={y} r={r} fill={color.surface} stroke={ink} strokeWidth={1.5} />;
+  return <path d={paths[shape]} fill={ink} />;
 }
 
 /** Towards a value that lies beyond the end of the axis. */
@@ -46,7 +45,7 @@ export function BeyondArrow({
   const back = x - sign * 1.8 * r;
   const { ink } = routeLook(name);
   return (
-    <Path
+    <path
       d={`M${back - sign * 2 * r} ${y}H${x}M${back} ${y - 1.1 * r}L${x} ${y}L${back} ${y + 1.1 * r}`}
       stroke={ink}
       strokeWidth={1.6}

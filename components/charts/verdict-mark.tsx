@@ -1,5 +1,4 @@
 import { StyleSheet, View } from 'react-native';
-import Svg, { Circle, Path } from 'react-native-svg';
 import type { Verdict } from '@/pricing/contract';
 import { color, space } from '@/constants/theme';
 import { agreementText } from '@/constants/texts/agreement';
@@ -23,8 +22,8 @@ const lines: Record<Verdict, string[]> = {
 export function VerdictShape({ verdict, size = 18 }: { verdict: Verdict; size?: number }) {
   const ink = color[verdictTone[verdict]];
   return (
-    <Svg width={size} height={size} viewBox="0 0 18 18" fill="none" aria-hidden>
-      <Circle
+    <svg width={size} height={size} viewBox="0 0 18 18" fill="none" aria-hidden>
+      <circle
         cx={9}
         cy={9}
         r={7.9}
@@ -33,9 +32,9 @@ export function VerdictShape({ verdict, size = 18 }: { verdict: Verdict; size?: 
         strokeDasharray={verdict === 'one-route' ? '3 2.2' : undefined}
       />
       {lines[verdict].map((d) => (
-        <Path key={d} d={d} stroke={ink} strokeWidth={1.5} strokeLinecap="round" />
+        <path key={d} d={d} stroke={ink} strokeWidth={1.5} strokeLinecap="round" />
       ))}
-    </Svg>
+    </svg>
   );
 }
 

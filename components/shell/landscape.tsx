@@ -1,4 +1,3 @@
-import Svg, { Circle, Path } from 'react-native-svg';
 import { color } from '@/constants/theme';
 
 /**
@@ -21,21 +20,21 @@ const levels = [
   'M900 1000C900 996 900 989 900 976C900 963 900 944 900 922C900 901 900 875 900 846C900 816 900 784 899 748C898 712 898 674 896 632C895 590 894 545 892 498C890 451 888 400 886 348C884 295 881 239 878 181C875 124 870 30 869 0',
 ];
 const priced = 6;
-const point = { x: 538, y: 450 };
+const point = { x: 584, y: 700 };
 
 /** The picture of the tool: every line joins the prices that are alike, and one point is priced. */
 export function Landscape() {
   return (
-    <Svg
+    <svg
       width="100%"
       height="100%"
       viewBox="0 0 1000 1000"
-      preserveAspectRatio="xMidYMid slice"
+      preserveAspectRatio="xMidYMax slice"
       fill="none"
       aria-hidden
     >
       {levels.map((d, index) => (
-        <Path
+        <path
           key={d}
           d={d}
           stroke={index === priced ? color.lake : color.contour}
@@ -43,7 +42,7 @@ export function Landscape() {
           vectorEffect="non-scaling-stroke"
         />
       ))}
-      <Circle
+      <circle
         cx={point.x}
         cy={point.y}
         r={11}
@@ -51,6 +50,6 @@ export function Landscape() {
         stroke={color.lake}
         strokeWidth={4}
       />
-    </Svg>
+    </svg>
   );
 }

@@ -1,32 +1,8 @@
-import { StyleSheet, View } from 'react-native';
-import { color, radius, space } from '@/constants/theme';
-import { Text, type Tone } from './text';
+import type { Tone } from './text';
 
 export type BadgeProps = { label: string; tone?: Exclude<Tone, 'ink'> };
 
-const softOf: Record<Exclude<Tone, 'ink'>, string> = {
-  muted: color.sunk,
-  lake: color.lakeSoft,
-  moss: color.mossSoft,
-  ochre: color.ochreSoft,
-  brick: color.brickSoft,
-};
-
+/** A short state; the word carries it, the colour only helps to find it. */
 export function Badge({ label, tone = 'muted' }: BadgeProps) {
-  return (
-    <View style={[styles.badge, { backgroundColor: softOf[tone] }]}>
-      <Text size="small" weight="medium" tone={tone}>
-        {label}
-      </Text>
-    </View>
-  );
+  return <span className={`badge badge-${tone}`}>{label}</span>;
 }
-
-const styles = StyleSheet.create({
-  badge: {
-    alignSelf: 'flex-start',
-    paddingHorizontal: space.sm,
-    paddingVertical: 1,
-    borderRadius: radius.small,
-  },
-});

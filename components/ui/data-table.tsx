@@ -1,11 +1,8 @@
-import { tableFeatures, useTable, type ColumnDef } from '@tanstack/react-table';
-import { useMemo, type KeyboardEvent, type MouseEvent, type ReactNode } from 'react';
+import type { KeyboardEvent, MouseEvent, ReactNode } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { space } from '@/constants/theme';
 import { Link } from './link';
 import { useWide } from './use-wide';
-
-const features = tableFeatures({});
 
 export type Column<Row> = {
   id: string;
@@ -31,15 +28,6 @@ export type DataTableProps<Row> = {
   card?: (row: Row) => ReactNode;
 };
 
-const definitionsOf = <Row extends object>(
-  columns: readonly Column<Row>[],
-): ColumnDef<typeof features, Row>[] =>
-  columns.map(({ id, header, cell }) => ({
-    id,
-    header,
-    cell: ({ row }) => cell(row.original),
-  }));
-
 /** Up and down move between the rows' links, home and end jump. */
 function moveBetweenRows(event: KeyboardEvent<HTMLTableSectionElement>) {
   const links = Array.from(event.currentTarget.querySelectorAll<HTMLElement>('.table-row-link'));
@@ -64,12 +52,9 @@ function followRow(event: MouseEvent<HTMLTableRowElement>) {
   event.currentTarget.querySelector<HTMLElement>('.table-row-link')?.click();
 }
 
-export function DataTable<Row extends object>(props: DataTableProps<Row>) {
-  const { caption, columns, rows, rowId, rowHref, card, sticky = false, plain = false } = props;
+export function DataTable<Row>(props: DataTableProps<Row>) {
+  const { caption, columns, rows, rowId, rowHref, card, sticky = false } = props;
   const wide = useWide();
-  const data = useMemo(() => [...rows], [rows]);
-  const definitions = useMemo(() => definitionsOf(columns), [columns]);
-  const table = useTable({ features, data, columns: definitions, getRowId: rowId });
   if (!wide && card)
     return (
       <View role="list" aria-label={caption} style={styles.cards}>
@@ -80,65 +65,51 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
         ))}
       </View>
     );
-  const alignOf = (id: string) => columns.find((column) => column.id === id)?.align;
   return (
-    <div
-      className={`${plain ? 'table-plain' : 'table-frame'} ${sticky ? 'table-sticky' : 'table-scroll'}`}
-    >
+    <div className={sticky ? 'table-frame table-sticky' : 'table-frame table-scroll'}>
       <table className="table">
         <caption className="visually-hidden">{caption}</caption>
         <thead>
           <tr>
-            {table.getFlatHeaders().map((header) => (
-              <th key={header.id} scope="col" data-align={alignOf(header.column.id)}>
-                <table.FlexRender header={header} />
+            {columns.map(({ id, header, align }) => (
+              <th key={id} scope="col" data-align={align}>
+                {header}
               </th>
             ))}
           </tr>
         </thead>
         <tbody onKeyDown={moveBetweenRows}>
-          {table.getRowModel().rows.map((row) => {
-            const href = rowHref?.(row.original);
-            return (
-              <tr
-                key={row.id}
-                data-link={href !== undefined}
-                onClick={href === undefined ? undefined : followRow}
-              >
-                {row.getAllCells().map((cell, index) => (
-                  <Cell
-                    key={cell.id}
-                    heads={index === 0}
-                    align={alignOf(cell.column.id)}
-                    href={index === 0 ? href : undefined}
-                  >
-                    <table.FlexRender cell={cell} />
-                  </Cell>
-                ))}
-              </tr>
-            );
-          })}
+          {rows.map((row) => (
+            <BodyRow key={rowId(row)} row={row} columns={columns} href={rowHref?.(row)} />
+          ))}
         </tbody>
       </table>
     </div>
   );
 }
 
-type CellProps = { heads: boolean; align?: 'start' | 'end'; href?: string; children: ReactNode };
+type BodyRowProps<Row> = { row: Row; columns: readonly Column<Row>[]; href: string | undefined };
 
 /** The first cell names its row, and carries the row's link. */
-function Cell({ heads, align, href, children }: CellProps) {
-  if (!heads) return <td data-align={align}>{children}</td>;
+function BodyRow<Row>({ row, columns, href }: BodyRowProps<Row>) {
+  const [first, ...others] = columns;
   return (
-    <th scope="row" data-align={align}>
-      {href === undefined ? (
-        children
-      ) : (
-        <Link href={href} className="table-row-link">
-          {children}
-        </Link>
-      )}
-    </th>
+    <tr data-link={href !== undefined} onClick={href === undefined ? undefined : followRow}>
+      <th scope="row" data-align={first.align}>
+        {href === undefined ? (
+          first.cell(row)
+        ) : (
+          <Link href={href} className="table-row-link">
+            {first.cell(row)}
+          </Link>
+        )}
+      </th>
+      {others.map(({ id, align, cell }) => (
+        <td key={id} data-align={align}>
+          {cell(row)}
+        </td>
+      ))}
+    </tr>
   );
 }
 

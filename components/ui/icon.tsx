@@ -1,4 +1,3 @@
-import Svg, { Circle, Path } from 'react-native-svg';
 import { color as colors } from '@/constants/theme';
 
 /** Own line icons on a grid of 24, drawn with one pen; dots are separate circles. */
@@ -48,9 +47,9 @@ export type IconProps = { name: IconName; size?: number; color?: string };
 export function Icon({ name, size = 24, color = 'currentcolor' }: IconProps) {
   const drawing: { paths: string[]; dots?: number[][] } = drawings[name];
   return (
-    <Svg width={size} height={size} viewBox="0 0 24 24" fill="none" aria-hidden>
+    <svg width={size} height={size} viewBox="0 0 24 24" fill="none" aria-hidden>
       {drawing.paths.map((d) => (
-        <Path
+        <path
           key={d}
           d={d}
           stroke={color}
@@ -60,9 +59,9 @@ export function Icon({ name, size = 24, color = 'currentcolor' }: IconProps) {
         />
       ))}
       {drawing.dots?.map(([x, y]) => (
-        <Circle key={`${x} ${y}`} cx={x} cy={y} r={1.3} fill={color} />
+        <circle key={`${x} ${y}`} cx={x} cy={y} r={1.3} fill={color} />
       ))}
-    </Svg>
+    </svg>
   );
 }
 
@@ -74,11 +73,11 @@ export function Mark({ size = 28, color = colors.lake }: { size?: number; color?
     'M2 21.4c7.6.2 8.8-3.6 11.6-7.2 2.2-2.8 4-3.8 8.4-4',
   ];
   return (
-    <Svg width={size} height={size} viewBox="0 0 24 24" fill="none" aria-hidden>
+    <svg width={size} height={size} viewBox="0 0 24 24" fill="none" aria-hidden>
       {lines.map((d) => (
-        <Path key={d} d={d} stroke={color} strokeWidth={1.7} strokeLinecap="round" />
+        <path key={d} d={d} stroke={color} strokeWidth={1.7} strokeLinecap="round" />
       ))}
-      <Circle cx={11.2} cy={9} r={2.1} fill={color} />
-    </Svg>
+      <circle cx={11.2} cy={9.1} r={2.9} fill={color} stroke={colors.surface} strokeWidth={1.3} />
+    </svg>
   );
 }

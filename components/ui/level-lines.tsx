@@ -1,4 +1,3 @@
-import Svg, { Circle, Path } from 'react-native-svg';
 import { color } from '@/constants/theme';
 
 /** A small patch of the value map: level lines that rise to the right, and one point on them. */
@@ -10,9 +9,9 @@ export function LevelLines({ width = 160 }: { width?: number }) {
     return `M0 ${low} C ${bend} ${low - 4}, ${bend + 14} ${low - 62 + 5 * k}, 200 ${22 - 9 * k}`;
   };
   return (
-    <Svg width={width} height={height} viewBox="0 0 200 100" fill="none" aria-hidden>
+    <svg width={width} height={height} viewBox="0 0 200 100" fill="none" aria-hidden>
       {[0, 1, 2, 3, 4, 5].map((k) => (
-        <Path
+        <path
           key={k}
           d={line(k)}
           stroke={k === 2 ? color.lake : color.contour}
@@ -20,7 +19,7 @@ export function LevelLines({ width = 160 }: { width?: number }) {
           strokeLinecap="round"
         />
       ))}
-      <Circle cx={99} cy={46} r={5} fill={color.surface} stroke={color.lake} strokeWidth={2} />
-    </Svg>
+      <circle cx={99} cy={46} r={5} fill={color.surface} stroke={color.lake} strokeWidth={2} />
+    </svg>
   );
 }

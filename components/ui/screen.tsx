@@ -29,28 +29,45 @@ export function Screen(props: ScreenProps) {
   useEffect(() => {
     document.title = `${title} · ${uiText.product}`;
   }, [title]);
+  const heading = <Heading level={1}>{title}</Heading>;
+  const below = <Quiet>{subtitle}</Quiet>;
   return (
     <View role="main" nativeID="content" tabIndex={-1} style={[styles.main, wide && styles.wide]}>
       <View style={[styles.column, { maxWidth: measure }]}>
-        <View style={styles.head}>
-          {wide ? null : <Mark size={30} />}
-          <View style={styles.words}>
-            {typeof overline === 'string' ? (
-              <Text size="small" tone="muted">
-                {overline}
-              </Text>
-            ) : (
-              overline
-            )}
-            <Heading level={1}>{title}</Heading>
-            {typeof subtitle === 'string' ? <Text tone="muted">{subtitle}</Text> : subtitle}
+        {wide ? (
+          <View style={styles.line}>
+            <View style={styles.words}>
+              <Quiet small>{overline}</Quiet>
+              {heading}
+              {below}
+            </View>
+            {actions ? <View style={styles.actions}>{actions}</View> : null}
           </View>
-          {wide ? null : corner}
-          {actions ? <View style={styles.actions}>{actions}</View> : null}
-        </View>
+        ) : (
+          <View style={styles.stack}>
+            <View style={styles.line}>
+              <Mark size={30} />
+              <View style={styles.words}>{heading}</View>
+              {corner}
+            </View>
+            <Quiet small>{overline}</Quiet>
+            {below}
+            {actions ? <View style={styles.actions}>{actions}</View> : null}
+          </View>
+        )}
         {children}
       </View>
     </View>
+  );
+}
+
+/** A quiet line when it is a text, else whatever it is. */
+function Quiet({ small = false, children }: { small?: boolean; children: ReactNode }) {
+  if (typeof children !== 'string') return children;
+  return (
+    <Text size={small ? 'small' : 'body'} tone="muted">
+      {children}
+    </Text>
   );
 }
 
@@ -58,12 +75,8 @@ const styles = StyleSheet.create({
   main: { flexGrow: 1, padding: space.md, paddingBottom: space.xl, backgroundColor: color.ground },
   wide: { padding: space.xl, paddingTop: space.xl },
   column: { width: '100%', gap: space.lg },
-  head: {
-    flexDirection: 'row',
-    flexWrap: 'wrap',
-    alignItems: 'center',
-    gap: space.md,
-  },
+  stack: { gap: space.xs },
+  line: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', gap: space.md },
   words: { flexGrow: 1, flexShrink: 1, flexBasis: 120, gap: 2 },
   actions: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', gap: space.sm },
 });

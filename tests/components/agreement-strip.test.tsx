@@ -149,8 +149,9 @@ describe.each(['row', 'card'] as const)('the strip in a %s', (size) => {
     const { container } = render(
       <AgreementStrip {...agreeing} routes={[heat, walk, closed]} size={size} />,
     );
-    const drawing = [...container.querySelectorAll('svg')].find((svg) => svg.querySelector('rect'));
-    const shapes = [...(drawing?.querySelectorAll('circle, path') ?? [])].map(
+    const drawings = Array.from(container.querySelectorAll('svg'));
+    const drawing = drawings.find((svg) => svg.querySelector('rect'));
+    const shapes = Array.from(drawing?.querySelectorAll('circle, path') ?? []).map(
       (shape) => shape.tagName + (shape.getAttribute('d') ?? '').replace(/[-\d. ]/g, ''),
     );
     expect(new Set(shapes).size).toBe(3);
