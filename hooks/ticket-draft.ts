@@ -119,7 +119,12 @@ function withClose(draft: TicketDraft, underlying: Underlying): TicketDraft {
 /** What the close says at a market field that has been changed since; null where it still stands. */
 export function closeTextBeside({ source, texts }: TicketDraft, field: MarketTextField) {
   if (source.kind !== 'close' || source.texts[field] === '') return null;
-  return source.texts[field] === texts[field] ? null : source.texts[field];
+  return isSameNumber(source.texts[field], texts[field]) ? null : source.texts[field];
+}
+
+function isSameNumber(a: string, b: string): boolean {
+  const [one, other] = [parseDecimal(a), parseDecimal(b)];
+  return one.ok && other.ok && one.value === other.value;
 }
 
 /** Whether a later close than the ticket's is approved. */
@@ -129,7 +134,11 @@ export const hasNewerClose = ({ source }: TicketDraft, { close }: Underlying): b
 
 /** Whether the market still reads as the close gave it, so that a later one may take its place. */
 const isUntouched = ({ source, texts }: TicketDraft): boolean =>
-  source.kind === 'close' && marketFields.every((field) => source.texts[field] === texts[field]);
+  source.kind === 'close' &&
+  marketFields.every(
+    (field) =>
+      source.texts[field] === texts[field] || isSameNumber(source.texts[field], texts[field]),
+  );
 
 const marketFields: readonly MarketTextField[] = ['spot', 'volatility', 'rate', 'yield'];
 

@@ -33,31 +33,37 @@ export function AnswerCard({ evidence, compared = evidence, staleReason }: Answe
   const { height } = useWindowDimensions();
   const settling = compared !== evidence && styles.settling;
   const strip = (
-    <View style={settling}>
-      <AnswerStrip evidence={compared} />
-    </View>
+    <Faded stale={staleReason !== undefined}>
+      <View style={settling}>
+        <AnswerStrip evidence={compared} />
+      </View>
+    </Faded>
   );
   return (
     <Card style={[styles.card, wide && styles.wideCard]}>
       <View style={[styles.figures, wide && styles.wideFigures]}>
-        <View style={[styles.figures, staleReason !== undefined && styles.stale]}>
+        <Faded stale={staleReason !== undefined}>
           <ValueLine evidence={evidence} />
-          <View style={settling}>
-            <VerdictLine evidence={compared} />
-          </View>
-          {wide || height < leastHeightForStrip ? null : strip}
-          <TotalLine evidence={evidence} />
+        </Faded>
+        <View style={settling}>
+          <VerdictLine evidence={compared} staleReason={staleReason} />
         </View>
-        {staleReason === undefined ? null : (
-          <Text size="small" weight="medium" tone="brick">
-            {staleReason}
-          </Text>
-        )}
+        {wide || height < leastHeightForStrip ? null : strip}
+        <Faded stale={staleReason !== undefined}>
+          <TotalLine evidence={evidence} />
+        </Faded>
       </View>
-      {wide ? (
-        <View style={[styles.wideStrip, staleReason !== undefined && styles.stale]}>{strip}</View>
-      ) : null}
+      {wide ? <View style={styles.wideStrip}>{strip}</View> : null}
     </Card>
+  );
+}
+
+/** A price of other terms than those on the screen stands back. */
+function Faded({ stale, children }: { stale: boolean; children: ReactNode }) {
+  return (
+    <View role="group" aria-disabled={stale} style={stale && styles.stale}>
+      {children}
+    </View>
   );
 }
 
@@ -92,24 +98,38 @@ const toleranceWords: Record<Verdict, ((tolerance: string) => string) | null> = 
   'one-route': null,
 };
 
-function VerdictLine({ evidence }: { evidence: Evidence }) {
-  const { verdict, tolerance } = evidence;
-  const words = verdict === null ? null : toleranceWords[verdict];
+type VerdictLineProps = { evidence: Evidence; staleReason?: string };
+
+/** The verdict, or why there is none on these terms; then the caution mark. */
+function VerdictLine({ evidence, staleReason }: VerdictLineProps) {
   return (
     <View style={styles.verdict}>
-      {verdict === null ? (
-        <Text tone="muted">{ticketText.comparing}</Text>
+      {staleReason === undefined ? (
+        <VerdictWords evidence={evidence} />
       ) : (
-        <VerdictMark verdict={verdict} long />
+        <Text weight="medium" tone="brick" style={styles.verdictWords}>
+          {staleReason}
+        </Text>
       )}
+      <View style={styles.cautionPlace}>
+        <CautionButton evidence={evidence} />
+      </View>
+    </View>
+  );
+}
+
+function VerdictWords({ evidence }: { evidence: Evidence }) {
+  const { verdict, tolerance } = evidence;
+  if (verdict === null) return <Text tone="muted">{ticketText.comparing}</Text>;
+  const words = toleranceWords[verdict];
+  return (
+    <View style={[styles.verdictWords, styles.line]}>
+      <VerdictMark verdict={verdict} long />
       {words ? (
         <Text tabular tone="muted">
           {words(formatNumber(tolerance, decimalsOf(evidence)))}
         </Text>
       ) : null}
-      <View style={styles.cautionPlace}>
-        <CautionButton evidence={evidence} />
-      </View>
     </View>
   );
 }
@@ -182,7 +202,7 @@ const styles = StyleSheet.create({
   figures: { gap: 6 },
   wideFigures: { flexGrow: 1, flexShrink: 1, flexBasis: 320 },
   wideStrip: { flexGrow: 1, flexShrink: 1, flexBasis: 300, maxWidth: 420 },
-  stale: { opacity: 0.55 },
+  stale: { opacity: 0.5 },
   // Dimmed only when the other routes take long enough to be noticed.
   settling: {
     opacity: 0.5,
@@ -191,7 +211,8 @@ const styles = StyleSheet.create({
     transitionDelay: '150ms',
   } as object,
   line: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'baseline', columnGap: space.sm },
-  verdict: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', columnGap: 6 },
+  verdict: { flexDirection: 'row', alignItems: 'center', minHeight: 24 },
+  verdictWords: { flexShrink: 1 },
   cautionPlace: { marginLeft: 'auto', marginVertical: -11 },
   end: { marginLeft: 'auto' },
   placeholder: { minHeight: 132, justifyContent: 'center' },

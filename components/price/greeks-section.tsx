@@ -47,12 +47,12 @@ function linesOf(greeks: Greeks, position: PositionTerms | null, currency: strin
 
 function Aligned({ text, padding }: AlignedText) {
   return (
-    <Text tabular>
+    <span>
       {text}
-      <Text tabular aria-hidden style={styles.unseen}>
+      <span aria-hidden style={{ visibility: 'hidden' }}>
         {padding}
-      </Text>
-    </Text>
+      </span>
+    </span>
   );
 }
 
@@ -86,5 +86,4 @@ const columnsOf = (currency: string): Column<GreekLine>[] => [
 const styles = StyleSheet.create({
   section: { flexGrow: 1, paddingBottom: space.xs },
   table: { marginHorizontal: -space.lg },
-  unseen: { visibility: 'hidden', userSelect: 'none' } as object,
 });

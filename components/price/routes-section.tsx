@@ -72,9 +72,9 @@ function RouteName({ route: { name, result } }: { route: Route }) {
         <RouteDot name={name} x={6} y={6} r={4} />
       </svg>
       <View style={styles.name}>
-        <Text>{routeLabel(name)}</Text>
+        <Text style={styles.unbroken}>{routeLabel(name)}</Text>
         {sizes ? (
-          <Text size="small" tone="muted" tabular>
+          <Text size="small" tone="muted" tabular style={styles.unbroken}>
             {sizes}
           </Text>
         ) : null}
@@ -109,6 +109,7 @@ const styles = StyleSheet.create({
   section: { flexGrow: 1, paddingBottom: space.md },
   table: { marginHorizontal: -space.lg },
   route: { flexDirection: 'row', alignItems: 'center', gap: space.sm },
-  name: { flexShrink: 1 },
+  name: { flexShrink: 0 },
+  unbroken: { whiteSpace: 'nowrap' } as object,
   warnings: { gap: space.xs },
 });

@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { Button } from '@/components/ui/button';
 import { Notice } from '@/components/ui/notice';
@@ -16,8 +17,18 @@ import type { Ticket } from '@/hooks/use-ticket';
 /** What became of a quote: saved, refused, or kept until the server answers. */
 export function SaveNotices({ ticket, desk }: { ticket: Ticket; desk: DeskAccess }) {
   const { saved, refused, kept } = ticket.saving;
+  const place = useRef<HTMLDivElement>(null);
+  const outcome = saved?.quote.id ?? refused?.requestId ?? (kept.length > 0 ? kept.length : null);
+  const before = useRef(outcome);
+  useEffect(() => {
+    // Only what has just happened is brought into view, not what a reload finds again.
+    if (outcome !== null && outcome !== before.current)
+      place.current?.scrollIntoView({ block: 'nearest' });
+    before.current = outcome;
+  }, [outcome]);
+  if (outcome === null && ticket.kept) return null;
   return (
-    <>
+    <div ref={place} className="outcome">
       {saved ? <SavedNotice saved={saved} deskId={desk.id} /> : null}
       {refused ? (
         <Notice
@@ -37,7 +48,7 @@ export function SaveNotices({ ticket, desk }: { ticket: Ticket; desk: DeskAccess
       ) : null}
       {kept.length > 0 ? <KeptNotice ticket={ticket} desk={desk} /> : null}
       {ticket.kept ? null : <Notice tone="ochre" title={ticketText.storageFull} />}
-    </>
+    </div>
   );
 }
 

@@ -44,7 +44,12 @@ export function VolatilityDialog({ ticket, underlying, onClose }: SolveProps) {
       unit={ticketText.perUnit(currency, unit)}
       text={text}
       onChangeText={setText}
-      outcome={outcomeOf(question, premium, solution, found && ticketText.volatilityFound(found))}
+      outcome={outcomeOf(
+        question,
+        premium,
+        solution,
+        found && ticketText.volatilityFound(`${found} ${ticketText.percent}`),
+      )}
       found={found}
       onTake={(volatility) => {
         ticket.dispatch({ type: 'type', field: 'volatility', text: volatility });

@@ -48,12 +48,8 @@ type PricedTicketProps = { ticket: Ticket; desk: DeskAccess; underlying: Underly
 
 function PricedTicket({ ticket, desk, underlying }: PricedTicketProps) {
   const wide = useWide();
-  const terms = (
-    <View style={styles.terms}>
-      <TermsForm ticket={ticket} underlying={underlying} />
-      <SaveNotices ticket={ticket} desk={desk} />
-    </View>
-  );
+  const terms = <TermsForm ticket={ticket} underlying={underlying} />;
+  const notices = <SaveNotices ticket={ticket} desk={desk} />;
   const answer = <TicketAnswer ticket={ticket} underlying={underlying} />;
   const evidence = <TicketEvidence ticket={ticket} underlying={underlying} />;
   const acts = <Acts ticket={ticket} />;
@@ -63,6 +59,7 @@ function PricedTicket({ ticket, desk, underlying }: PricedTicketProps) {
         <View style={styles.narrowColumn}>
           {terms}
           {acts}
+          {notices}
         </View>
         <View style={styles.wideColumn}>
           {answer}
@@ -73,6 +70,7 @@ function PricedTicket({ ticket, desk, underlying }: PricedTicketProps) {
   return (
     <>
       <StickyAnswer>{answer}</StickyAnswer>
+      {notices}
       {terms}
       {evidence}
       {acts}
@@ -90,13 +88,18 @@ function Acts({ ticket }: { ticket: Ticket }) {
     <ActionBar>
       <Button
         grow
-        label={saving.sending ? ticketText.saving : ticketText.save}
+        label={saveLabel(saving)}
         busy={saving.sending}
         disabled={!canSave || saving.saved !== null}
         onPress={save}
       />
     </ActionBar>
   );
+}
+
+function saveLabel({ sending, saved }: Ticket['saving']): string {
+  if (sending) return ticketText.saving;
+  return saved ? ticketText.savedTitle(saved.quote.number) : ticketText.save;
 }
 
 /** Reads from top to bottom like a note: why it can be trusted, how it moves, what it assumes. */
@@ -119,7 +122,6 @@ function TicketEvidence({ ticket, underlying }: { ticket: Ticket; underlying: Un
 }
 
 const styles = StyleSheet.create({
-  terms: { gap: space.md },
   columns: { flexDirection: 'row', alignItems: 'flex-start', gap: space.xl },
   narrowColumn: { flexShrink: 0, width: 336, gap: space.lg },
   wideColumn: { flexGrow: 1, flexShrink: 1, flexBasis: 0, minWidth: 0, gap: space.lg },
