@@ -1,6 +1,6 @@
 /** The session's rules against a server that is played by a function. */
 import type * as Api from '@/hooks/api';
-import { ApiError } from '@/shared/api-client';
+import { type ApiError } from '@/shared/api-client';
 import { endpoints } from '@/shared/contracts';
 
 const analyst = { id: '00000000-0000-4000-8000-000000000001', name: 'Analyst' };
