@@ -11,7 +11,7 @@
  * Both: Rannacher's four implicit half-steps first, the payoff averaged over the strike's cell, and
  * (`smoothing: 'richardson'`, the default) extrapolation over grids of full, half and quarter size,
  * which also gives the error estimate (`heat/refine.ts`). `smoothing: 'none'` is the plain scheme,
- * order 2 in both steps: observed 1.97 to 2.03 on smooth settings (`tests/pricing/heat.test.ts`).
+ * order 2 in both steps: observed 1.85 to 2.15 on smooth settings (`tests/pricing/heat.test.ts`).
  *
  * Accuracy at the default 200 × 100, of the strike: European 3e-7 on the European, futures and
  * currency reference families; American 2e-5 just beside the exercise boundary and 1e-6 elsewhere
