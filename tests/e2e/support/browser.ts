@@ -1,0 +1,61 @@
+/** Debian's Chromium, driven the way a person would: one browser a file, one context a person. */
+import AxeBuilder from '@axe-core/playwright';
+import { chromium, type Browser, type BrowserContext, type Page } from 'playwright-core';
+
+export const phone = { width: 390, height: 844 };
+export const wide = { width: 1440, height: 900 };
+
+export const baseUrl = (): string => {
+  const url = process.env.E2E_BASE_URL;
+  if (!url) throw new Error('E2E_BASE_URL names the running product; `npm test` sets it.');
+  return url;
+};
+
+/** Root needs --no-sandbox; the rest keeps Chromium from looking for hosts of its own. */
+const args = [
+  '--no-sandbox',
+  '--disable-gpu',
+  '--disable-quic',
+  '--no-first-run',
+  '--disable-background-networking',
+  '--disable-component-update',
+  '--disable-sync',
+];
+
+export const launchBrowser = (): Promise<Browser> =>
+  chromium.launch({ executablePath: '/usr/bin/chromium', args });
+
+export type Visit = { context: BrowserContext; page: Page; complaints: string[] };
+
+/**
+ * A new person at the door. Whatever the console or the page complains of is gathered, so that a
+ * test can assert that nothing did.
+ */
+export async function visit(
+  browser: Browser,
+  viewport: { width: number; height: number },
+  colorScheme: 'light' | 'dark' = 'light',
+): Promise<Visit> {
+  const context = await browser.newContext({ viewport, colorScheme, baseURL: baseUrl() });
+  const page = await context.newPage();
+  const complaints: string[] = [];
+  page.on('pageerror', (error) => complaints.push(error.message));
+  page.on('console', (message) => {
+    if (message.type() === 'error') complaints.push(message.text());
+  });
+  return { context, page, complaints };
+}
+
+/** Violations of WCAG 2.2 A and AA on the page as it stands, one line each. */
+export async function accessibilityFindings(page: Page): Promise<string[]> {
+  const { violations } = await new AxeBuilder({ page })
+    .withTags(['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'])
+    .analyze();
+  return violations.map(
+    ({ id, nodes }) => `${id}: ${nodes.map(({ target }) => target.join(' ')).join(', ')}`,
+  );
+}
+
+/** How far the page scrolls sideways, in pixels. */
+export const sidewaysScroll = (page: Page): Promise<number> =>
+  page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth);
