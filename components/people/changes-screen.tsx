@@ -134,20 +134,21 @@ const columns = (timeZone: string): Column<AccessEvent>[] => [
   {
     id: 'at',
     header: changesText.at,
+    nowrap: true,
     cell: ({ at }) => (
-      <Text tone="muted" tabular numberOfLines={1}>
+      <Text tone="muted" tabular>
         {formatInstant(at, timeZone)}
       </Text>
     ),
   },
-  { id: 'subject', header: changesText.subject, cell: ({ subject }) => subject.name },
+  { id: 'subject', header: changesText.subject, nowrap: true, cell: ({ subject }) => subject.name },
   { id: 'what', header: changesText.what, cell: describe },
   { id: 'reason', header: changesText.reason, cell: ({ reason }) => reason },
-  { id: 'madeBy', header: changesText.madeBy, cell: ({ madeBy }) => madeBy.name },
+  { id: 'madeBy', header: changesText.madeBy, nowrap: true, cell: ({ madeBy }) => madeBy.name },
 ];
 
 const styles = StyleSheet.create({
-  filter: { maxWidth: 360, width: '100%' },
+  filter: { maxWidth: 400, width: '100%' },
   more: { alignItems: 'center' },
   card: { gap: 2 },
 });

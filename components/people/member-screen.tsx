@@ -76,12 +76,12 @@ function MemberPage({ member }: { member: Member }) {
       {done ? <Notice tone="moss" title={done} /> : null}
       {obstacle ? <Notice tone="lake" title={obstacle} /> : null}
       <View style={wide ? styles.columns : styles.column}>
-        <View style={styles.column}>
+        <View style={wide ? styles.half : styles.column}>
           <RoleSection member={member} start={start} />
           <SingleChangesSection member={member} start={start} />
           <MembershipSection member={member} start={start} />
         </View>
-        <View style={styles.column}>
+        <View style={wide ? styles.half : styles.column}>
           <StandingSection member={member} />
         </View>
       </View>
@@ -122,5 +122,6 @@ function OpenDialog({ act, ...rest }: OpenDialogProps) {
 
 const styles = StyleSheet.create({
   columns: { flexDirection: 'row', alignItems: 'flex-start', gap: space.lg },
-  column: { flexGrow: 1, flexShrink: 1, flexBasis: 'auto', gap: space.lg, minWidth: 0 },
+  column: { gap: space.lg, minWidth: 0 },
+  half: { flexGrow: 1, flexShrink: 1, flexBasis: 0, gap: space.lg, minWidth: 0 },
 });

@@ -24,13 +24,13 @@ export function MoreScreen() {
   return (
     <Screen title={moreText.title}>
       <View style={wide ? styles.columns : styles.column}>
-        <View style={styles.column}>
+        <View style={wide ? styles.half : styles.column}>
           <Account />
           <Desks />
           <Look />
           <Programs />
         </View>
-        <View style={styles.column}>
+        <View style={wide ? styles.half : styles.column}>
           <OwnPermissions />
           <Conventions />
           <Cautions />
@@ -154,7 +154,8 @@ function Cautions() {
 
 const styles = StyleSheet.create({
   columns: { flexDirection: 'row', alignItems: 'flex-start', gap: space.lg },
-  column: { flexGrow: 1, flexShrink: 1, flexBasis: 'auto', gap: space.lg, minWidth: 0 },
+  column: { gap: space.lg, minWidth: 0 },
+  half: { flexGrow: 1, flexShrink: 1, flexBasis: 0, gap: space.lg, minWidth: 0 },
   start: { alignItems: 'flex-start' },
   list: { gap: space.sm },
   point: { flexDirection: 'row', alignItems: 'flex-start', gap: space.sm },

@@ -11,7 +11,6 @@ export function PlainPage({ title, body }: { title: string; body: string }) {
   return (
     <Screen title={title}>
       <EmptyState
-        title={title}
         body={body}
         action={<Button kind="secondary" label={shellText.toStart} href="/" />}
       />

@@ -10,6 +10,8 @@ export type Column<Row> = {
   cell: (row: Row) => ReactNode;
   /** `end`: numbers, which align on the decimal point by figures of one width. */
   align?: 'start' | 'end';
+  /** Short words that stay on one line, such as names. */
+  nowrap?: boolean;
 };
 
 export type DataTableProps<Row> = {
@@ -52,8 +54,11 @@ function followRow(event: MouseEvent<HTMLTableRowElement>) {
   event.currentTarget.querySelector<HTMLElement>('.table-row-link')?.click();
 }
 
+const tableClass = (plain: boolean, sticky: boolean) =>
+  `${plain ? 'table-plain' : 'table-frame'} ${sticky ? 'table-sticky' : 'table-scroll'}`;
+
 export function DataTable<Row>(props: DataTableProps<Row>) {
-  const { caption, columns, rows, rowId, rowHref, card, sticky = false } = props;
+  const { caption, columns, rows, rowId, rowHref, card, sticky = false, plain = false } = props;
   const wide = useWide();
   if (!wide && card)
     return (
@@ -66,7 +71,7 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
       </View>
     );
   return (
-    <div className={sticky ? 'table-frame table-sticky' : 'table-frame table-scroll'}>
+    <div className={tableClass(plain, sticky)}>
       <table className="table">
         <caption className="visually-hidden">{caption}</caption>
         <thead>
@@ -95,7 +100,7 @@ function BodyRow<Row>({ row, columns, href }: BodyRowProps<Row>) {
   const [first, ...others] = columns;
   return (
     <tr data-link={href !== undefined} onClick={href === undefined ? undefined : followRow}>
-      <th scope="row" data-align={first.align}>
+      <th scope="row" data-align={first.align} data-nowrap={first.nowrap}>
         {href === undefined ? (
           first.cell(row)
         ) : (
@@ -104,8 +109,8 @@ function BodyRow<Row>({ row, columns, href }: BodyRowProps<Row>) {
           </Link>
         )}
       </th>
-      {others.map(({ id, align, cell }) => (
-        <td key={id} data-align={align}>
+      {others.map(({ id, align, nowrap, cell }) => (
+        <td key={id} data-align={align} data-nowrap={nowrap}>
           {cell(row)}
         </td>
       ))}

@@ -7,14 +7,14 @@ import { LevelLines } from './level-lines';
 import { Notice } from './notice';
 import { Heading, Text } from './text';
 
-export type EmptyStateProps = { title: string; body?: string; action?: ReactNode };
+export type EmptyStateProps = { title?: string; body?: string; action?: ReactNode };
 
 /** Nothing here yet, and the one act that fills it. */
 export function EmptyState({ title, body, action }: EmptyStateProps) {
   return (
     <View style={styles.empty}>
       <LevelLines />
-      <Heading level={2}>{title}</Heading>
+      {title ? <Heading level={2}>{title}</Heading> : null}
       {body ? (
         <Text tone="muted" style={styles.centred}>
           {body}
