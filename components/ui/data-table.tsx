@@ -20,7 +20,7 @@ export type DataTableProps<Row> = {
   columns: readonly Column<Row>[];
   rows: readonly Row[];
   rowId: (row: Row) => string;
-  /** Keeps the heading row in sight while the page scrolls; not with a table wider than the page. */
+  /** Keeps the heading row in sight while a wide window scrolls. */
   sticky?: boolean;
   /** The page of a row: its first cell becomes the link, and the whole row opens it. */
   rowHref?: (row: Row) => string;
@@ -71,7 +71,7 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
       </View>
     );
   return (
-    <div className={tableClass(plain, sticky)}>
+    <div className={tableClass(plain, sticky && wide)}>
       <table className="table">
         <caption className="visually-hidden">{caption}</caption>
         <thead>

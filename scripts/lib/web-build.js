@@ -22,6 +22,7 @@ const inputs = [
   'tsconfig.json',
   'package.json',
   'package-lock.json',
+  'scripts/web-unused.js',
   'scripts/zod-locales.js',
 ];
 
