@@ -29,8 +29,8 @@ export type MethodSizes = Omit<MethodSettings, 'name'>;
  *     least the true error in 95 % of cases, and at most thirty times it in 80 % of the cases
  *     whose true error exceeds ten times rounding. It is null only where none can be given.
  *  7. All the Greeks of `contract.ts` come with the value, in the units of `conventions.ts`, from
- *     the method itself where it can give them; a Greek got by revaluing a bumped market says so
- *     in a warning.
+ *     the method itself where it can give them; where a rate's Greek is the difference of revalued
+ *     markets, the diagnostics carry the size of the move as `rateBump`.
  *  8. A warning has a code and one sentence for the person who reads the number. Diagnostics are
  *     finite numbers under fixed names.
  *  9. `machinery` names what a wrong number could come from, in words shared by all methods. Two

@@ -7,7 +7,7 @@ import {
   type Tridiagonal,
   type TridiagonalFactors,
 } from '@/pricing/numerics/tridiagonal';
-import { solveByPolicy } from '@/pricing/heat/policy';
+import { makePolicySolver } from '@/pricing/heat/policy';
 
 /**
  * The American put as a heat problem with an obstacle, per unit of strike.
@@ -197,12 +197,14 @@ function makeStepper(
   const inner = values.length - 2;
   const right = new Float64Array(inner);
   const innerObstacle = obstacle.subarray(1, inner + 1);
+  const innerValues = values.subarray(1, inner + 1);
   const matrix: Tridiagonal = {
     lower: new Float64Array(inner),
     diagonal: new Float64Array(inner),
     upper: new Float64Array(inner),
   };
   const factors: TridiagonalFactors = makeFactors(inner);
+  const solveByPolicy = makePolicySolver(inner);
   return (length, theta, lowEdge) => {
     const explicit = (1 - theta) * length;
     const implicit = theta * length;
@@ -220,7 +222,7 @@ function makeStepper(
       factorTridiagonal(matrix, factors);
       solveProjected(matrix.lower, factors, right, innerObstacle);
     } else {
-      solveByPolicy(matrix, right, innerObstacle, values.subarray(1, inner + 1));
+      solveByPolicy(matrix, right, innerObstacle, innerValues);
     }
     values[0] = lowEdge;
     values.set(right, 1);

@@ -13,13 +13,15 @@ import {
  * `before`, the previous time level, exercised, and then mostly needs two or three solves. The
  * solution replaces `right`.
  */
-export function solveByPolicy(
+export type PolicySolver = (
   matrix: Tridiagonal,
   right: Float64Array,
   obstacle: Float64Array,
   before: Float64Array,
-): void {
-  const size = right.length;
+) => void;
+
+/** A solver for systems of `size` rows; it owns its working arrays, because it runs in each step. */
+export function makePolicySolver(size: number): PolicySolver {
   const chosen: Tridiagonal = {
     lower: new Float64Array(size),
     diagonal: new Float64Array(size),
@@ -28,20 +30,22 @@ export function solveByPolicy(
   const factors = makeFactors(size);
   const solution = new Float64Array(size);
   const exercised = new Uint8Array(size);
-  for (let i = 0; i < size; i++) exercised[i] = before[i] <= obstacle[i] ? 1 : 0;
-  for (let round = 0; round <= size; round++) {
-    for (let i = 0; i < size; i++) {
-      const stop = exercised[i] === 1;
-      chosen.lower[i] = stop ? 0 : matrix.lower[i];
-      chosen.diagonal[i] = stop ? 1 : matrix.diagonal[i];
-      chosen.upper[i] = stop ? 0 : matrix.upper[i];
-      solution[i] = stop ? obstacle[i] : right[i];
+  return (matrix, right, obstacle, before) => {
+    for (let i = 0; i < size; i++) exercised[i] = before[i] <= obstacle[i] ? 1 : 0;
+    for (let round = 0; round <= size; round++) {
+      for (let i = 0; i < size; i++) {
+        const stop = exercised[i] === 1;
+        chosen.lower[i] = stop ? 0 : matrix.lower[i];
+        chosen.diagonal[i] = stop ? 1 : matrix.diagonal[i];
+        chosen.upper[i] = stop ? 0 : matrix.upper[i];
+        solution[i] = stop ? obstacle[i] : right[i];
+      }
+      factorTridiagonal(chosen, factors);
+      solveTridiagonal(chosen.lower, factors, solution);
+      if (!choose(matrix, right, obstacle, solution, exercised)) break;
     }
-    factorTridiagonal(chosen, factors);
-    solveTridiagonal(chosen.lower, factors, solution);
-    if (!choose(matrix, right, obstacle, solution, exercised)) break;
-  }
-  right.set(solution);
+    right.set(solution);
+  };
 }
 
 /** Takes the better of holding and exercising in each row; says whether any row changed. */
