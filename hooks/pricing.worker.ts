@@ -46,7 +46,8 @@ function priceNextRoute() {
   routes.push({ name, result: price({ contract, market, method: { name } }) });
   const complete = routes.length === names.length;
   const comparison = complete ? compareRoutes(routes, task.tolerance) : null;
-  reply({ sequence, kind: 'routes', routes, comparison });
+  // The first number at once, then the whole comparison: each answer costs the page a drawing.
+  if (complete || routes.length === 1) reply({ sequence, kind: 'routes', routes, comparison });
   if (complete) job = null;
   else schedule();
 }

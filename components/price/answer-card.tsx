@@ -123,7 +123,7 @@ function VerdictWords({ evidence }: { evidence: Evidence }) {
   if (verdict === null) return <Text tone="muted">{ticketText.comparing}</Text>;
   const words = toleranceWords[verdict];
   return (
-    <View style={[styles.verdictWords, styles.line]}>
+    <View style={[styles.verdictWords, styles.centred]}>
       <VerdictMark verdict={verdict} long />
       {words ? (
         <Text tabular tone="muted">
@@ -213,6 +213,7 @@ const styles = StyleSheet.create({
   line: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'baseline', columnGap: space.sm },
   verdict: { flexDirection: 'row', alignItems: 'center', minHeight: 24 },
   verdictWords: { flexShrink: 1 },
+  centred: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', columnGap: space.sm },
   cautionPlace: { marginLeft: 'auto', marginVertical: -11 },
   end: { marginLeft: 'auto' },
   placeholder: { minHeight: 132, justifyContent: 'center' },

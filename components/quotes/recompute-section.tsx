@@ -1,3 +1,4 @@
+import { StyleSheet, View } from 'react-native';
 import { Button } from '@/components/ui/button';
 import { Section } from '@/components/ui/card';
 import { DataTable, type Column } from '@/components/ui/data-table';
@@ -43,6 +44,7 @@ function Outcome({ routes }: { routes: readonly RecomputedRoute[] }) {
         columns={columns}
         rows={routes}
         rowId={({ name }) => name}
+        card={(route) => <OutcomeLine route={route} />}
       />
     </>
   );
@@ -51,23 +53,44 @@ function Outcome({ routes }: { routes: readonly RecomputedRoute[] }) {
 /** All the digits that tell two doubles apart. */
 const fullDigits = (value: number) => formatQuantity(value, 0, 20);
 
+const recomputedText = ({ recomputed }: RecomputedRoute) =>
+  recomputed === null ? priceText.failed : fullDigits(recomputed);
+
+function differenceText(route: RecomputedRoute): string {
+  if (route.recomputed === null) return '';
+  return isSame(route) ? quotesText.same : formatDifference(route.recomputed - route.recorded, 6);
+}
+
+/** A route on a phone, where all its digits do not fit into a row. */
+function OutcomeLine({ route }: { route: RecomputedRoute }) {
+  return (
+    <View style={styles.line}>
+      <Text>{routeLabel(route.name)}</Text>
+      <Text tone="muted">{differenceText(route)}</Text>
+      <Text tabular style={styles.digits}>
+        {recomputedText(route)}
+      </Text>
+    </View>
+  );
+}
+
 const columns: Column<RecomputedRoute>[] = [
   { id: 'route', header: priceText.route, cell: ({ name }) => routeLabel(name) },
   {
     id: 'recomputed',
     header: quotesText.recomputed,
     align: 'end',
-    cell: ({ recomputed }) => (recomputed === null ? priceText.failed : fullDigits(recomputed)),
+    cell: recomputedText,
   },
   {
     id: 'difference',
     header: quotesText.difference,
     align: 'end',
-    cell: (route) => {
-      if (route.recomputed === null) return '';
-      return isSame(route)
-        ? quotesText.same
-        : formatDifference(route.recomputed - route.recorded, 6);
-    },
+    cell: differenceText,
   },
 ];
+
+const styles = StyleSheet.create({
+  line: { flexDirection: 'row', flexWrap: 'wrap', justifyContent: 'space-between' },
+  digits: { flexBasis: '100%' },
+});

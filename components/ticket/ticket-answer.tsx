@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'react';
+import { memo, useEffect, useMemo, useState } from 'react';
 import { AnswerCard, AnswerPlaceholder } from '@/components/price/answer-card';
 import { findingOf } from '@/components/charts/agreement-finding';
 import { agreementOf, answerOf, decimalsOf, type Evidence } from '@/components/price/evidence';
@@ -9,35 +9,39 @@ import { formatErrorEstimate, formatNumber } from '@/shared/format/numbers';
 import type { IndicativePrice } from '@/hooks/use-indicative-price';
 import type { Ticket } from '@/hooks/use-ticket';
 
-/** The ticket's price with what speaks for it; null before the first route has come in. */
-export function evidenceOf(
+/**
+ * The ticket's price with what speaks for it; null before the first route has come in. It stays
+ * the same object while nothing of it changes, so that a key stroke draws only what it moves.
+ */
+export function useEvidence(
   ticket: Ticket,
   underlying: Underlying,
   price: IndicativePrice | null,
 ): Evidence | null {
-  if (!price || price.routes.length === 0) return null;
-  const first = price.routes.find(({ result }) => result.ok) ?? price.routes[0];
+  const { direction } = ticket.draft;
   const { quantity, contractSize } = ticket.reading.position;
-  return {
-    routes: price.routes,
-    primary: first.name,
-    verdict: price.comparison?.verdict ?? null,
-    refuted: price.comparison?.refuted ?? false,
-    tolerance: price.tolerance,
-    underlying,
-    exercise: price.request.contract.exercise,
-    position:
-      quantity === undefined || contractSize === undefined
-        ? null
-        : { direction: ticket.draft.direction, quantity, contractSize },
-  };
+  return useMemo(() => {
+    if (!price || price.routes.length === 0) return null;
+    const first = price.routes.find(({ result }) => result.ok) ?? price.routes[0];
+    const known = quantity !== undefined && contractSize !== undefined;
+    return {
+      routes: price.routes,
+      primary: first.name,
+      verdict: price.comparison?.verdict ?? null,
+      refuted: price.comparison?.refuted ?? false,
+      tolerance: price.tolerance,
+      underlying,
+      exercise: price.request.contract.exercise,
+      position: known ? { direction, quantity, contractSize } : null,
+    };
+  }, [price, underlying, direction, quantity, contractSize]);
 }
 
 export function TicketAnswer({ ticket, underlying }: { ticket: Ticket; underlying: Underlying }) {
   const { pricing, stopping } = ticket;
-  const newest = evidenceOf(ticket, underlying, pricing.price);
+  const newest = useEvidence(ticket, underlying, pricing.price);
   const settled = pricing.compared === pricing.price ? null : pricing.compared;
-  const compared = evidenceOf(ticket, underlying, settled);
+  const compared = useEvidence(ticket, underlying, settled);
   if (pricing.failed) return <AnswerPlaceholder>{ticketText.workerFailed}</AnswerPlaceholder>;
   if (!newest)
     return (
@@ -48,7 +52,7 @@ export function TicketAnswer({ ticket, underlying }: { ticket: Ticket; underlyin
   const staleWords = pricing.current ? ticketText.stoppedBy : ticketText.staleBecause;
   return (
     <>
-      <AnswerCard
+      <MemoizedCard
         evidence={newest}
         compared={compared ?? undefined}
         staleReason={stopping ? staleWords(fieldName(stopping)) : undefined}
@@ -57,6 +61,8 @@ export function TicketAnswer({ ticket, underlying }: { ticket: Ticket; underlyin
     </>
   );
 }
+
+const MemoizedCard = memo(AnswerCard);
 
 /** Long enough that a price is read out once typing rests, not at every key. */
 const spokenAfterMs = 900;

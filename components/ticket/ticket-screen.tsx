@@ -1,6 +1,7 @@
-import type { ReactNode } from 'react';
+import { memo, type ReactNode } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { CautionsSection } from '@/components/price/cautions';
+import type { Evidence } from '@/components/price/evidence';
 import { GreeksSection } from '@/components/price/greeks-section';
 import { RoutesSection } from '@/components/price/routes-section';
 import { ActionBar } from '@/components/ui/action-bar';
@@ -16,7 +17,7 @@ import { errorOf } from '@/hooks/error-of';
 import { useTicket, type Ticket } from '@/hooks/use-ticket';
 import { SaveNotices } from './save-notices';
 import { TermsForm } from './terms-form';
-import { evidenceOf, TicketAnswer } from './ticket-answer';
+import { TicketAnswer, useEvidence } from './ticket-answer';
 
 export type TicketScreenProps = {
   userId: string;
@@ -102,10 +103,14 @@ function saveLabel({ sending, saved }: Ticket['saving']): string {
   return saved ? ticketText.savedTitle(saved.quote.number) : ticketText.save;
 }
 
-/** Reads from top to bottom like a note: why it can be trusted, how it moves, what it assumes. */
 function TicketEvidence({ ticket, underlying }: { ticket: Ticket; underlying: Underlying }) {
-  const evidence = evidenceOf(ticket, underlying, ticket.pricing.compared ?? ticket.pricing.price);
-  if (!evidence) return null;
+  const { compared, price } = ticket.pricing;
+  const evidence = useEvidence(ticket, underlying, compared ?? price);
+  return evidence ? <EvidenceSections evidence={evidence} /> : null;
+}
+
+/** Reads from top to bottom like a note: why it can be trusted, how it moves, what it assumes. */
+const EvidenceSections = memo(function EvidenceSections({ evidence }: { evidence: Evidence }) {
   return (
     <>
       <View style={styles.pair}>
@@ -119,7 +124,7 @@ function TicketEvidence({ ticket, underlying }: { ticket: Ticket; underlying: Un
       <CautionsSection evidence={evidence} />
     </>
   );
-}
+});
 
 const styles = StyleSheet.create({
   columns: { flexDirection: 'row', alignItems: 'flex-start', gap: space.xl },

@@ -90,7 +90,7 @@ export const ticketText = {
   firstPrice: 'Pricing',
   noPriceYet: 'No price yet',
   stoppedBy: (field: string) => `Not priced: see ${field}.`,
-  staleBecause: (field: string) => `The last good price; ${field} stops a new one.`,
+  staleBecause: (field: string) => `Last good price; see ${field}.`,
   cannotPrice: 'These terms could not be priced.',
   workerFailed: 'The pricing thread stopped. Reload the page; the ticket is kept.',
   position: (direction: string, size: string, unit: string, lots: string) =>
