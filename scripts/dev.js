@@ -11,7 +11,11 @@ const { demonstrationSignIns, seedDatabase, serviceEnvironment } = require('./li
 const { expoCli, expoEnvironment } = require('./lib/web-build');
 
 function startWatched(args, env) {
-  const started = startChild(process.execPath, args, { env });
+  // Neither may read the keyboard: Ctrl-C is this launcher's.
+  const started = startChild(process.execPath, args, {
+    env,
+    stdio: ['ignore', 'inherit', 'inherit'],
+  });
   onStop(() => endChild(started, 5000));
   return started;
 }
@@ -40,7 +44,7 @@ main(async (ready) => {
   const tsx = path.join(root, 'node_modules', 'tsx', 'dist', 'cli.mjs');
   const server = startWatched([tsx, 'watch', 'server/main.ts'], environment);
   const metroArgs = ['start', '--web', '--localhost', '--port', String(metroPort)];
-  const metro = startWatched([expoCli, ...metroArgs], { ...expoEnvironment(), CI: '' });
+  const metro = startWatched([expoCli, ...metroArgs], expoEnvironment());
   await startProxy(port, { serverPort, metroPort });
   writeRunning(home.folder, { pid: server.child.pid, port });
   ready();
