@@ -16,9 +16,10 @@ const storageKey = 'driftless-desk';
 export const rememberDesk = (deskId: string): void =>
   window.localStorage.setItem(storageKey, deskId);
 
-/** The desk that was open last, or the first one that is open to this person. */
+/** The desk that was open last, or the first one; one that is open to this person before others. */
 export function landingDesk(): DeskAccess | undefined {
-  const open = (readSession().me?.desks ?? []).filter(({ suspended }) => !suspended);
+  const desks = readSession().me?.desks ?? [];
+  const open = desks.filter(({ suspended }) => !suspended);
   const kept = window.localStorage.getItem(storageKey);
-  return open.find(({ id }) => id === kept) ?? open[0];
+  return open.find(({ id }) => id === kept) ?? open[0] ?? desks[0];
 }

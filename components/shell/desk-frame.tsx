@@ -9,6 +9,7 @@ import type { DeskAccess, Me } from '@/shared/contracts/sessions';
 import { DeskSwitch } from './desk-switch';
 import { BottomBar, Rail, sectionOf } from './navigation';
 import { PlainPage } from './permitted';
+import { usePageStart } from './use-page-start';
 
 export type DeskFrameProps = { me: Me; desk: DeskAccess; children: ReactNode };
 
@@ -17,6 +18,7 @@ export function DeskFrame({ me, desk, children }: DeskFrameProps) {
   const wide = useWide();
   const section = sectionOf(usePathname());
   useEffect(() => rememberDesk(desk.id), [desk.id]);
+  usePageStart();
   const deskSwitch = <DeskSwitch desks={me.desks} current={desk} />;
   // Someone who is suspended can still see who they are and sign out.
   const content =

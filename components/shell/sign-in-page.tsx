@@ -25,7 +25,7 @@ export function SignInPage() {
       <View style={wide ? styles.pictureWide : styles.picture}>
         <Landscape />
       </View>
-      <View role="main" nativeID="content" style={[styles.column, wide && styles.columnWide]}>
+      <View role="main" id="content" style={[styles.column, wide && styles.columnWide]}>
         <View style={styles.brand}>
           <Mark size={40} />
           <Text style={styles.name}>{shellText.product}</Text>

@@ -21,7 +21,7 @@ export function Section({ title, action, children, style }: SectionProps) {
   return (
     <View role="region" aria-labelledby={id} style={[styles.card, styles.section, style]}>
       <View style={styles.head}>
-        <Heading level={2} nativeID={id}>
+        <Heading level={2} id={id}>
           {title}
         </Heading>
         {action}

@@ -52,7 +52,7 @@ export function Dialog({ title, open, onClose, children, actions, size = 'normal
     >
       <View style={styles.body}>
         <View style={styles.head}>
-          <Heading level={2} nativeID={titleId}>
+          <Heading level={2} id={titleId}>
             {title}
           </Heading>
           <button type="button" className="icon-button" aria-label={uiText.close} onClick={onClose}>

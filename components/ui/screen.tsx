@@ -32,7 +32,7 @@ export function Screen(props: ScreenProps) {
   const heading = <Heading level={1}>{title}</Heading>;
   const below = <Quiet>{subtitle}</Quiet>;
   return (
-    <View role="main" nativeID="content" tabIndex={-1} style={[styles.main, wide && styles.wide]}>
+    <View role="main" id="content" tabIndex={-1} style={[styles.main, wide && styles.wide]}>
       <View style={[styles.column, { maxWidth: measure }]}>
         {wide ? (
           <View style={styles.line}>
