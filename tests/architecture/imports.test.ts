@@ -32,7 +32,8 @@ function resolveImport(importer: string, specifier: string): string | null {
 }
 
 function isFile(file: string): boolean {
-  return fs.statSync(path.join(root, file), { throwIfNoEntry: false })?.isFile() ?? false;
+  const full = path.join(root, file);
+  return fs.existsSync(full) && fs.statSync(full).isFile();
 }
 
 /** `import type` counts for the rules; for cycles only what is there at run time does. */
