@@ -1,0 +1,8 @@
+import { roles } from './0001-roles';
+import { people } from './0002-people';
+import { market } from './0003-market';
+import { quotes } from './0004-quotes';
+import type { Migration } from './migration';
+
+/** Every migration, oldest first. Listed by hand, so that the bundled server carries them. */
+export const migrations: readonly Migration[] = [roles, people, market, quotes];

@@ -1,0 +1,93 @@
+/**
+ * Demonstration data, all invented: the Tarnfield Cooperative hedges grain, freight and currency.
+ * Everything is made through the services, by people who may do it; nothing happens in a database
+ * that has users already.
+ */
+import { addDays } from '@/shared/dates';
+import { sequelize } from './database';
+import { log } from './log';
+import type { Desk } from './models/desk';
+import { actorOn, personNamed, seedChanges, seedPeople, type People } from './seed/people';
+import { seedQuotes, type Listed } from './seed/quotes';
+import { commodities, treasury, type SeedUnderlying } from './seed/underlyings';
+import { writeDemonstration } from './seed/unfinished';
+import { today } from './services/access';
+import { createDesk } from './services/firm';
+import { approveClose, enterClose } from './services/market-data';
+import { closePasswordThreads } from './services/passwords';
+import { closePricingThreads } from './services/pricing';
+import { createUnderlying } from './services/underlyings';
+
+/** The last weekday before a day. */
+function businessDayBefore(date: string): string {
+  const before = addDays(date, -1);
+  const weekday = new Date(before).getUTCDay();
+  return weekday === 0 || weekday === 6 ? businessDayBefore(before) : before;
+}
+
+async function list(desk: Desk, underlyings: readonly SeedUnderlying[]): Promise<Listed[]> {
+  const listed: Listed[] = [];
+  for (const underlying of underlyings) {
+    const { market, ...draft } = underlying;
+    listed.push({ id: await createUnderlying(desk, draft), underlying });
+  }
+  return listed;
+}
+
+async function close(desk: Desk, listed: readonly Listed[], makerId: string, checkerId: string) {
+  const snapshotId = await enterClose(desk, {
+    date: businessDayBefore(today(desk)),
+    enteredById: makerId,
+    closes: listed.map(({ id, underlying }) => ({ underlyingId: id, market: underlying.market })),
+  });
+  await approveClose(desk, snapshotId, checkerId);
+}
+
+async function fillDesk(
+  desk: Desk,
+  people: People,
+  underlyings: readonly SeedUnderlying[],
+  accounts: { makers: string[]; checker: string },
+  patternCount: number,
+) {
+  const makers = accounts.makers.map((account) => personNamed(people, account));
+  const listed = await list(desk, underlyings);
+  await close(desk, listed, makers[0].userId, personNamed(people, accounts.checker).userId);
+  const actors = await Promise.all(makers.map((maker) => actorOn(desk, maker)));
+  await seedQuotes(actors, listed, patternCount);
+}
+
+async function write() {
+  const grain = await createDesk({
+    name: 'Commodities',
+    timeZone: 'Europe/Berlin',
+    expiryCutoff: '17:30',
+  });
+  const money = await createDesk({
+    name: 'Treasury',
+    timeZone: 'Europe/Berlin',
+    expiryCutoff: '14:00',
+  });
+  const people = await seedPeople([grain, money]);
+  const checker = 'risk-officer';
+  const grainMakers = ['analyst', 'second-analyst', 'desk-head'];
+  await fillDesk(grain, people, commodities, { makers: grainMakers, checker }, 4);
+  const moneyMakers = ['treasury-analyst', 'treasury-desk-head'];
+  await fillDesk(money, people, treasury, { makers: moneyMakers, checker }, 3);
+  await seedChanges(grain, people);
+}
+
+async function seed() {
+  try {
+    const isNew = await writeDemonstration(write);
+    log.info(isNew ? 'demonstration data written' : 'the database has users; nothing to write');
+  } finally {
+    await Promise.all([closePasswordThreads(), closePricingThreads()]);
+    await sequelize.close();
+  }
+}
+
+seed().catch((error) => {
+  log.fatal({ err: error }, 'the demonstration data could not be written');
+  process.exitCode = 1;
+});

@@ -1,0 +1,113 @@
+/** Quotes of both desks, made one by one as a ticket would make them. */
+import type { Market } from '@/pricing/contract';
+import type { QuoteDraft } from '@/shared/contracts/quotes';
+import { dateOfTenor } from '@/shared/dates';
+import { pricingRequestOf } from '@/shared/quote-terms';
+import { sequelize } from '../database';
+import { today, type DeskActor } from '../services/access';
+import { priceRoutes } from '../services/pricing';
+import { createQuote } from '../services/quotes';
+import type { SeedUnderlying } from './underlyings';
+
+export type Listed = { id: string; underlying: SeedUnderlying };
+
+type Pattern = Pick<QuoteDraft, 'kind' | 'exercise' | 'direction' | 'quantity' | 'note'> & {
+  moneyness: number;
+  tenor: string;
+  /** Where the market stood against its close. */
+  move: number;
+};
+
+const patterns: readonly Pattern[] = [
+  {
+    kind: 'put',
+    exercise: 'american',
+    direction: 'sell',
+    quantity: '10',
+    moneyness: 0.98,
+    tenor: '6m',
+    move: 0.004,
+    note: 'Asked by phone; floor for the new crop',
+  },
+  {
+    kind: 'call',
+    exercise: 'european',
+    direction: 'sell',
+    quantity: '25',
+    moneyness: 1.05,
+    tenor: '3m',
+    move: -0.006,
+    note: '',
+  },
+  {
+    kind: 'put',
+    exercise: 'european',
+    direction: 'buy',
+    quantity: '4',
+    moneyness: 1,
+    tenor: '1m',
+    move: 0.002,
+    note: '',
+  },
+  {
+    kind: 'call',
+    exercise: 'american',
+    direction: 'buy',
+    quantity: '12.5',
+    moneyness: 1.1,
+    tenor: '1y',
+    move: 0,
+    note: 'Covers the forward sale',
+  },
+];
+
+const minuteMs = 60_000;
+const spacingMs = 25 * minuteMs;
+
+const rounded = (value: number, decimals: number) => Number(value.toFixed(decimals));
+
+function marketAt({ market, priceDecimals }: SeedUnderlying, move: number): Market {
+  return { ...market, spot: rounded(market.spot * (1 + move), priceDecimals) };
+}
+
+/** What the ticket showed: the browser prices with the same engine. */
+async function indicativeValue(terms: Omit<QuoteDraft, 'indicativeValue'>, actor: DeskActor) {
+  const { contract, market } = pricingRequestOf(terms, actor.desk);
+  const [{ result }] = await priceRoutes(contract, market);
+  if (!result.ok) throw new Error(`A quote of the demonstration has no price: ${result.message}`);
+  return result.value;
+}
+
+async function seedQuote(actor: DeskActor, listed: Listed, pattern: Pattern, pricedAt: Date) {
+  const { id, underlying } = listed;
+  const { moneyness, tenor, move, ...kept } = pattern;
+  const expiryDate = dateOfTenor(tenor, today(actor.desk));
+  if (expiryDate === null) throw new Error(`${tenor} is no tenor.`);
+  const terms = {
+    ...kept,
+    underlyingId: id,
+    contractSize: underlying.contractSize,
+    strike: (underlying.market.spot * moneyness).toFixed(underlying.priceDecimals),
+    expiryDate,
+    market: marketAt(underlying, move),
+    pricedAt: pricedAt.toISOString(),
+  };
+  const draft = { ...terms, indicativeValue: await indicativeValue(terms, actor) };
+  await createQuote(actor, draft, (write) => sequelize.transaction(write));
+}
+
+/** Oldest first, the last one a few minutes ago. */
+export async function seedQuotes(
+  actors: readonly DeskActor[],
+  listed: readonly Listed[],
+  patternCount: number,
+) {
+  const planned = patterns
+    .slice(0, patternCount)
+    .flatMap((pattern) => listed.map((each) => ({ pattern, listed: each })));
+  const now = Date.now();
+  for (const [index, plan] of planned.entries()) {
+    const pricedAt = new Date(now - (planned.length - index) * spacingMs);
+    await seedQuote(actors[index % actors.length], plan.listed, plan.pattern, pricedAt);
+  }
+}
