@@ -2,7 +2,7 @@
 import { randomUUID } from 'node:crypto';
 import { createServer, type Server } from 'node:http';
 import compression from 'compression';
-import express, { type Express, type RequestHandler } from 'express';
+import express, { type Express, type Request, type RequestHandler } from 'express';
 import { pinoHttp } from 'pino-http';
 import { apiBase } from '@/shared/endpoint';
 import { env } from './env';
@@ -27,7 +27,9 @@ const requestLog = pinoHttp({
   },
   customLogLevel(req, res) {
     if (res.statusCode >= 500 && res.statusCode !== 503) return 'error';
-    return req.url?.startsWith(`${apiBase}/`) && !req.url.endsWith('/health') ? 'info' : 'debug';
+    const { originalUrl = '' } = req as Partial<Request>;
+    const isWork = originalUrl.startsWith(`${apiBase}/`) && !originalUrl.endsWith('/health');
+    return isWork ? 'info' : 'debug';
   },
 });
 

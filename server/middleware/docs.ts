@@ -21,10 +21,10 @@ export function docsRouter(): Router {
       swaggerOptions: { layout: 'BaseLayout' },
     }),
   );
-  // The page names its files relative to its own folder.
-  router.get('', (_req, res) => res.redirect('/api/docs/'));
-  router.get('/', (_req, res) => {
-    res.type('html').send(html);
+  router.get('/', (req, res) => {
+    // The page names its files relative to its own folder.
+    if (req.originalUrl.endsWith('/')) res.type('html').send(html);
+    else res.redirect(`${req.baseUrl}/`);
   });
   router.use(swaggerUi.serve);
   return router;
