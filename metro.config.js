@@ -6,8 +6,11 @@ const config = getDefaultConfig(__dirname);
 const zodFolder = path.join('node_modules', 'zod', 'v4');
 const standIn = (name) => ({ type: 'sourceFile', filePath: path.join(__dirname, 'scripts', name) });
 
-/** Never drawn by an application of plain slots and tables, and a third of the first script. */
-const undrawn = {
+/**
+ * Never used by an application of plain slots, tables and fields: Metro would keep all of it, which
+ * is two fifths of the first script.
+ */
+const unused = {
   'expo-router/build': [
     'fork/native-stack/createNativeStackNavigator',
     'layouts/Tabs',
@@ -18,24 +21,35 @@ const undrawn = {
     'react-navigation/bottom-tabs',
     'screensFeatureFlags',
   ],
-  'react-native-web/dist': [
-    'exports/Animated',
-    'exports/FlatList',
-    'exports/SectionList',
-    'exports/VirtualizedList',
+  'react-native-web/dist/exports': [
+    ...['ActivityIndicator', 'Animated', 'Button', 'CheckBox', 'FlatList', 'Image'],
+    ...['ImageBackground', 'KeyboardAvoidingView', 'Modal', 'PanResponder', 'Picker'],
+    ...['ProgressBar', 'RefreshControl', 'ScrollView', 'SectionList', 'Switch', 'TextInput'],
+    ...['Touchable', 'TouchableHighlight', 'TouchableNativeFeedback', 'TouchableOpacity'],
+    ...['TouchableWithoutFeedback', 'VirtualizedList'],
+  ],
+  'zod/v4': [
+    'classic/from-json-schema',
+    'core/json-schema-generator',
+    'core/json-schema-processors',
+    'core/to-json-schema',
   ],
 };
-const undrawnFiles = Object.entries(undrawn).flatMap(([folder, names]) =>
+const unusedFiles = Object.entries(unused).flatMap(([folder, names]) =>
   names.map((name) => path.join('node_modules', ...`${folder}/${name}`.split('/'))),
 );
-const isUndrawn = (target) => undrawnFiles.some((file) => target.endsWith(file));
+
+function isUnused(importer, name) {
+  if (!name.startsWith('.')) return false;
+  const target = path.join(path.dirname(importer), name.replace(/\.c?js$/, ''));
+  return unusedFiles.some((file) => target.endsWith(file));
+}
 
 config.resolver.resolveRequest = (context, name, platform) => {
   const isLocales = /locales\/index\.(js|cjs)$/.test(name);
   // zod re-exports every locale and Metro keeps all of them: English is the one that is used.
   if (isLocales && context.originModulePath.includes(zodFolder)) return standIn('zod-locales.js');
-  if (name.startsWith('.') && isUndrawn(path.join(path.dirname(context.originModulePath), name)))
-    return standIn('web-unused.js');
+  if (isUnused(context.originModulePath, name)) return standIn('web-unused.js');
   return context.resolveRequest(context, name, platform);
 };
 

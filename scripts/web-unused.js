@@ -1,12 +1,12 @@
 /**
- * Stands in the web bundle for what this application never draws: native stacks, tab bars and link
- * previews of the router, animated views and scrolling lists of react-native-web. Every layout here
- * is a plain slot and every list a plain table, so only what is asked for while loading is left.
+ * Stands in the web bundle for what this application never uses: native stacks, tab bars and link
+ * previews of the router, views of react-native-web that have no place on its pages, JSON schemas
+ * of zod, which only the server writes. What is left is what is asked for while loading.
  */
 const { createContext } = require('react');
 
 function LeftOut() {
-  throw new Error('This component is left out of the web bundle; see metro.config.js.');
+  throw new Error('This is left out of the web bundle; see metro.config.js.');
 }
 
 module.exports = {
@@ -16,4 +16,6 @@ module.exports = {
   BottomTabBarHeightContext: createContext(undefined),
   isNativeTabTrigger: () => false,
   initScreensFeatureFlags: () => undefined,
+  createToJSONSchemaMethod: LeftOut,
+  createStandardJSONSchemaMethod: LeftOut,
 };

@@ -1,4 +1,3 @@
-import { scaleLinear } from 'd3-scale';
 import type { Agreement } from './agreement-finding';
 
 /** The axis reaches at least this many tolerances to either side, so that the band keeps its size. */
@@ -28,9 +27,7 @@ export function layOutStrip(
   const farthest = Math.max(0, ...routes.map(({ value }) => Math.abs(value - centre)));
   const reach =
     tolerance * Math.min(farthestReach, Math.max(leastReach, (1.15 * farthest) / tolerance));
-  const scale = scaleLinear()
-    .domain([centre - reach, centre + reach])
-    .range([margin, width - margin]);
+  const scale = (value: number) => width / 2 + ((value - centre) / reach) * (width / 2 - margin);
   const inside = (x: number) => Math.min(width - margin, Math.max(margin, x));
   const placed = routes.map(({ name, value, errorEstimate }): PlacedRoute => {
     const beyond = value < centre - reach ? 'left' : value > centre + reach ? 'right' : null;

@@ -11,7 +11,6 @@ import { space } from '@/constants/theme';
 import { confirmPassword, dismissPrompt, forgetSession, signIn, type Prompt } from '@/hooks/api';
 import { useSession } from '@/hooks/use-session';
 import { ApiError } from '@/shared/api-client';
-import { errorRow } from '@/shared/errors';
 
 /**
  * What a waiting call asks of the person, laid over the open screen, which stays as it is: to sign
@@ -46,7 +45,7 @@ function usePasswordForm(prompt: Prompt, email: string) {
       else await confirmPassword(password);
     } catch (error) {
       if (!(error instanceof ApiError)) throw error;
-      if (error.code === 'sign-in-failed') setFieldError(errorRow('sign-in-failed').sentence);
+      if (error.code === 'sign-in-failed') setFieldError(signInText.wrongPassword);
       else if (error.issues.length > 0) setFieldError(error.issues[0].message);
       else setFailure(error);
     } finally {

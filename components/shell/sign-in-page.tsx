@@ -1,7 +1,6 @@
-import { zodResolver } from '@hookform/resolvers/zod';
-import { useEffect, useState } from 'react';
-import { Controller, useForm } from 'react-hook-form';
+import { useEffect, useRef, useState, type FormEvent } from 'react';
 import { StyleSheet, View } from 'react-native';
+import { z } from 'zod';
 import { Button } from '@/components/ui/button';
 import { Mark } from '@/components/ui/icon';
 import { Notice } from '@/components/ui/notice';
@@ -50,60 +49,74 @@ export function SignInPage() {
 }
 
 type Credentials = { email: string; password: string };
+type FieldErrors = Partial<Record<keyof Credentials, string>>;
 
 function useSignInForm() {
   const { signIn } = useSession();
+  const [credentials, setCredentials] = useState<Credentials>({ email: '', password: '' });
+  const [errors, setErrors] = useState<FieldErrors>({});
   const [failure, setFailure] = useState<ApiError | null>(null);
-  const form = useForm<Credentials>({
-    resolver: zodResolver(signInSchema),
-    defaultValues: { email: '', password: '' },
-  });
-  const submit = form.handleSubmit(async (credentials) => {
+  const [busy, setBusy] = useState(false);
+  const set = (name: keyof Credentials) => (text: string) =>
+    setCredentials((before) => ({ ...before, [name]: text }));
+  /** Sends what was typed; the name of the field that needs another look, if one does. */
+  const submit = async (): Promise<keyof Credentials | null> => {
     setFailure(null);
+    const parsed = signInSchema.safeParse(credentials);
+    if (!parsed.success) {
+      const { email, password } = z.flattenError(parsed.error).fieldErrors;
+      setErrors({ email: email?.[0], password: password?.[0] });
+      return email ? 'email' : 'password';
+    }
+    setErrors({});
+    setBusy(true);
     try {
-      await signIn(credentials);
+      await signIn(parsed.data);
     } catch (error) {
       if (!(error instanceof ApiError)) throw error;
-      if (error.code === 'sign-in-failed') {
-        form.setError('password', { message: error.message }, { shouldFocus: true });
-      } else setFailure(error);
+      if (error.code !== 'sign-in-failed') setFailure(error);
+      else {
+        setErrors({ password: error.message });
+        return 'password';
+      }
+    } finally {
+      setBusy(false);
     }
-  });
-  return { form, failure, submit };
+    return null;
+  };
+  return { credentials, set, errors, failure, busy, submit };
 }
 
 function SignInForm() {
-  const { form, failure, submit } = useSignInForm();
-  const { errors, isSubmitting } = form.formState;
+  const { credentials, set, errors, failure, busy, submit } = useSignInForm();
+  const email = useRef<HTMLInputElement>(null);
+  const password = useRef<HTMLInputElement>(null);
+  const send = async (event: FormEvent) => {
+    event.preventDefault();
+    const field = await submit();
+    if (field) ({ email, password })[field].current?.focus();
+  };
   return (
-    <form className="form" noValidate onSubmit={(event) => void submit(event)}>
-      <Controller
-        control={form.control}
+    <form className="form" noValidate onSubmit={(event) => void send(event)}>
+      <TextField
+        ref={email}
+        label={signInText.email}
+        type="email"
         name="email"
-        render={({ field }) => (
-          <TextField
-            {...field}
-            onChangeText={field.onChange}
-            label={signInText.email}
-            type="email"
-            autoComplete="username"
-            error={errors.email?.message}
-          />
-        )}
+        autoComplete="username"
+        value={credentials.email}
+        onChangeText={set('email')}
+        error={errors.email}
       />
-      <Controller
-        control={form.control}
+      <TextField
+        ref={password}
+        label={signInText.password}
+        type="password"
         name="password"
-        render={({ field }) => (
-          <TextField
-            {...field}
-            onChangeText={field.onChange}
-            label={signInText.password}
-            type="password"
-            autoComplete="current-password"
-            error={errors.password?.message}
-          />
-        )}
+        autoComplete="current-password"
+        value={credentials.password}
+        onChangeText={set('password')}
+        error={errors.password}
       />
       {failure ? (
         <Notice
@@ -111,7 +124,7 @@ function SignInForm() {
           title={failure.message}
         />
       ) : null}
-      <Button submit label={signInText.act} busy={isSubmitting} />
+      <Button submit label={signInText.act} busy={busy} />
     </form>
   );
 }

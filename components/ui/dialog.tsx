@@ -28,8 +28,8 @@ export function Dialog({ title, open, onClose, children, actions, size = 'normal
     const dialog = element.current;
     const opener = document.activeElement;
     dialog?.showModal();
-    // A dialog that asks for something begins at its first field, not at the close button.
-    dialog?.querySelector<HTMLElement>('input, select, textarea')?.focus();
+    // Where there is something to fill in, one starts there and not at the close button.
+    dialog?.querySelector<HTMLElement>('.field-input')?.focus();
     return () => {
       dialog?.close();
       if (opener instanceof HTMLElement) opener.focus();

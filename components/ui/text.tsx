@@ -58,6 +58,6 @@ export function Heading({ level, size = headingSizes[level], ...rest }: HeadingP
 }
 
 const styles = StyleSheet.create({
-  base: { overflowWrap: 'anywhere' } as object,
+  base: { overflowWrap: 'break-word' } as object,
   tabular: { fontVariant: ['tabular-nums'] },
 });

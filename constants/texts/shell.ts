@@ -46,7 +46,7 @@ export const signInText = {
   email: 'E-mail',
   password: 'Password',
   act: 'Sign in',
-  failed: 'E-mail or password is not right.',
+  wrongPassword: 'The password is not right.',
   again: 'Sign in again',
   againBody: 'Your session has ended. What you typed is still here, and is sent once you are back.',
   someoneElse: 'Not you? Leave this page',
