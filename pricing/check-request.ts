@@ -22,11 +22,13 @@ type Size = keyof typeof sizeLimits;
 type Limited = keyof typeof numberLimits;
 
 /** The settings that each method reads besides its name. */
-const settingsOf: Record<MethodName, readonly (Size | 'smoothing')[]> = {
+const settingsOf: Record<MethodName, readonly (Size | 'smoothing' | 'beyondStability')[]> = {
   'closed-form': [],
   'heat-crank-nicolson': ['spaceSteps', 'timeSteps', 'smoothing'],
   'lattice-crr': ['steps', 'smoothing'],
   'lattice-symmetric': ['steps', 'smoothing'],
+  'heat-explicit': ['spaceSteps', 'timeSteps', 'smoothing', 'beyondStability'],
+  'heat-implicit': ['spaceSteps', 'timeSteps', 'smoothing'],
 };
 
 /** Fields of the request shape that no priced payoff or market uses yet. */
@@ -132,6 +134,11 @@ function checkSize(issues: Issues, path: string, name: Size, given: unknown): vo
   } else if (!Number.isInteger(value)) {
     report(issues, 'out-of-range', path, `The ${labels[name]} must be a whole number.`);
   }
+}
+
+function checkFlag(issues: Issues, path: string, given: unknown): void {
+  if (typeof given === 'boolean') return;
+  report(issues, 'unknown-name', path, 'This setting is true or false.');
 }
 
 /** One of `names`, or undefined with an issue. */
@@ -257,6 +264,7 @@ function checkMethod(issues: Issues, value: unknown): MethodChoice | undefined {
     if (given === undefined) continue;
     const path = `method.${setting}`;
     if (setting === 'smoothing') checkName(issues, path, setting, smoothings, given);
+    else if (setting === 'beyondStability') checkFlag(issues, path, given);
     else checkSize(issues, path, setting, given);
     choice[setting] = given;
   }

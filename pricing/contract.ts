@@ -45,6 +45,8 @@ export type MethodSettings = {
   steps?: number;
   /** How a lattice value is refined; `none` gives the plain value of the stated tree. */
   smoothing?: 'none' | 'richardson';
+  /** Runs an explicit grid past its stability limit on purpose, to show what happens there. */
+  beyondStability?: boolean;
 };
 
 /** `tolerance`: the cheapest method and size whose own error estimate holds it (absolute). */
@@ -93,6 +95,7 @@ export const pricingIssueCodes = [
   'method-does-not-price',
   'too-many-steps',
   'too-few-steps',
+  'past-stability-limit',
   'tolerance-not-reached',
   'not-determined',
   'numerical-failure',

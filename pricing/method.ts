@@ -45,6 +45,11 @@ export type Method = {
   summary: string;
   /** Order in the step of space (grids) or in the reciprocal of steps (walks); null: exact. */
   theoreticalOrder: number | null;
+  /**
+   * By how much a study multiplies a size from row to row to see that order, where it is not 2: a
+   * scheme that is stable up to a fixed k/h² only needs four times the time steps.
+   */
+  studyGrowth?: { timeSteps: number };
   machinery: readonly string[];
   defaultSettings: MethodSizes;
   /** Where a search for a tolerance starts; it doubles every size until one holds or a cap ends it. */

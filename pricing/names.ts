@@ -24,6 +24,8 @@ export const methodNames = [
   'heat-crank-nicolson',
   'lattice-crr',
   'lattice-symmetric',
+  'heat-explicit',
+  'heat-implicit',
 ] as const;
 
 export const smoothings = ['none', 'richardson'] as const;

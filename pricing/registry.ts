@@ -2,6 +2,8 @@ import type { Contract, Market, MethodName } from '@/pricing/contract';
 import type { Method } from '@/pricing/method';
 import { closedForm } from '@/pricing/methods/closed-form';
 import { heatCrankNicolson } from '@/pricing/methods/heat-crank-nicolson';
+import { heatExplicit } from '@/pricing/methods/heat-explicit';
+import { heatImplicit } from '@/pricing/methods/heat-implicit';
 import { latticeCrr } from '@/pricing/methods/lattice-crr';
 import { latticeSymmetric } from '@/pricing/methods/lattice-symmetric';
 
@@ -14,6 +16,8 @@ export const methods: readonly Method[] = [
   heatCrankNicolson,
   latticeSymmetric,
   latticeCrr,
+  heatImplicit,
+  heatExplicit,
 ];
 
 export function methodNamed(name: MethodName): Method {

@@ -7,6 +7,8 @@ const routeLabels: Record<MethodName, string> = {
   'heat-crank-nicolson': 'Heat grid',
   'lattice-crr': 'CRR walk',
   'lattice-symmetric': 'Plain walk',
+  'heat-explicit': 'Explicit grid',
+  'heat-implicit': 'Implicit grid',
 };
 
 export const routeLabel = (name: MethodName): string => routeLabels[name];

@@ -72,7 +72,12 @@ export function priceAmericanOnGrid(
 }
 
 /** The contract as a put per unit of its strike, with rate and yield moved by the given bumps. */
-function putOf(contract: Contract, market: Market, rateBy: number, yieldBy: number): AmericanPut {
+export function putOf(
+  contract: Contract,
+  market: Market,
+  rateBy: number,
+  yieldBy: number,
+): AmericanPut {
   const x = log(market.spot / contract.strike);
   const rate = market.rate + rateBy;
   const carry = carryYield(market) + yieldBy;
@@ -96,7 +101,7 @@ function nodesBySize(problem: AmericanPut): (spaceSteps: number) => AmericanNode
 }
 
 /** C = S·v(−x) for a call, V = K·v(x) for a put: value and derivatives in x = ln(S/K). */
-function fromPut(local: LocalValue, kind: 'call' | 'put', unit: number): LogDerivatives {
+export function fromPut(local: LocalValue, kind: 'call' | 'put', unit: number): LogDerivatives {
   const { value, first, second } = local;
   if (kind === 'put') return { value: unit * value, slope: unit * first, curvature: unit * second };
   return {

@@ -38,7 +38,8 @@ export function refineGrid(
   return { local: fine, errorEstimate: 0.7 * movement + share * correction + firstOrder };
 }
 
-function extrapolate(fine: LocalValue, coarse: LocalValue, ratio: number): LocalValue {
+/** Cancels an error that falls like the square of the step, from two grids whose sizes have the ratio. */
+export function extrapolate(fine: LocalValue, coarse: LocalValue, ratio: number): LocalValue {
   const weight = 1 / (ratio * ratio - 1);
   return {
     value: fine.value + weight * (fine.value - coarse.value),

@@ -31,21 +31,18 @@
  * Sources: J. Crank, P. Nicolson (1947); R. Rannacher, Numerische Mathematik 43 (1984); M. J.
  * Brennan, E. S. Schwartz, Journal of Finance 32 (1977).
  */
-import type { Contract, Market, PricingFailure, PricingResult } from '@/pricing/contract';
+import type { Contract, Market, PricingResult } from '@/pricing/contract';
 import { priceAmericanOnGrid } from '@/pricing/heat/american';
 import { priceEuropeanOnGrid } from '@/pricing/heat/european';
+import { refuseGrid } from '@/pricing/heat/refusals';
 import type { Method, MethodSizes } from '@/pricing/method';
 
 const defaults = { spaceSteps: 200, timeSteps: 100, smoothing: 'richardson' } as const;
-const fewest = { spaceSteps: 32, timeSteps: 8 };
-const largestDeviation = 25;
 
 function price(contract: Contract, market: Market, settings: MethodSizes): PricingResult {
   const { spaceSteps, timeSteps, smoothing } = { ...defaults, ...settings };
-  const refusal =
-    tooFew('spaceSteps', spaceSteps) ??
-    tooFew('timeSteps', timeSteps) ??
-    tooWide(market.volatility * Math.sqrt(contract.expiry));
+  const deviation = market.volatility * Math.sqrt(contract.expiry);
+  const refusal = refuseGrid({ spaceSteps, timeSteps }, deviation);
   if (refusal) return refusal;
   const solve = contract.exercise === 'american' ? priceAmericanOnGrid : priceEuropeanOnGrid;
   const method = { name: 'heat-crank-nicolson', spaceSteps, timeSteps, smoothing } as const;
@@ -54,27 +51,6 @@ function price(contract: Contract, market: Market, settings: MethodSizes): Prici
     ...solve(contract, market, { spaceSteps, timeSteps, smoothing }),
     method,
     warnings: [],
-  };
-}
-
-function tooFew(size: keyof typeof fewest, steps: number): PricingFailure | null {
-  if (steps >= fewest[size]) return null;
-  const noun = size === 'spaceSteps' ? 'space steps' : 'time steps';
-  return {
-    ok: false,
-    code: 'too-few-steps',
-    path: `method.${size}`,
-    message: `The grid needs at least ${fewest[size]} ${noun}: a quarter of them must still be a grid.`,
-  };
-}
-
-function tooWide(deviation: number): PricingFailure | null {
-  if (deviation <= largestDeviation) return null;
-  return {
-    ok: false,
-    code: 'numerical-failure',
-    path: 'market.volatility',
-    message: `Volatility times the root of the expiry is ${deviation.toFixed(1)}, and the grid resolves up to ${largestDeviation}: lower the volatility or the expiry, or use another method.`,
   };
 }
 

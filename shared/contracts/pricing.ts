@@ -39,6 +39,10 @@ export const methodSettingsSchema = z.strictObject({
   timeSteps: sizeOf('Intervals of the time grid'),
   steps: sizeOf('Steps of the walk'),
   smoothing: z.enum(['none', 'richardson']).optional().describe('How a lattice value is refined'),
+  beyondStability: z
+    .boolean()
+    .optional()
+    .describe('Whether an explicit grid runs past its stability limit on purpose'),
 }) satisfies z.ZodType<MethodSettings>;
 
 export const greeksSchema = z.object({

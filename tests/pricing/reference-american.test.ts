@@ -1,10 +1,11 @@
 /**
- * Every method that prices American exercise, at its default settings, on the American reference
- * cases (collocation of the exercise boundary with 128 nodes, confirmed by a fine grid) and on the
+ * The routes of a cross-check of American exercise, at their default settings, on the American
+ * reference cases (collocation of the exercise boundary with 128 nodes, confirmed by a fine grid) and on the
  * published rows (digits recalled from memory, as each row says).
  */
 import type { Contract, Greeks, Market } from '@/pricing/contract';
-import { methods } from '@/pricing/registry';
+import { routesFor } from '@/pricing/index';
+import { methodNamed } from '@/pricing/registry';
 import american from '@/tests/reference/american.json';
 import published from '@/tests/reference/published.json';
 import { contractAndMarket } from './request-arbitraries';
@@ -33,15 +34,13 @@ const cases: Case[] = [
   })),
 ];
 
-const able = methods.filter((method) =>
-  method.prices(...termsOf(contractAndMarket(cases[0].request))),
-);
+const able = routesFor(...termsOf(contractAndMarket(cases[0].request))).map(methodNamed);
 
 function termsOf({ contract, market }: { contract: Contract; market: Market }) {
   return [contract, market] as const;
 }
 
-it('the grid and both walks price American exercise', () => {
+it('the routes are the grid and both walks', () => {
   expect(able.map(({ name }) => name)).toEqual([
     'heat-crank-nicolson',
     'lattice-symmetric',
