@@ -16,9 +16,28 @@ const typeSentences: Record<string, string> = {
   boolean: 'Give true or false.',
 };
 
-/** The alternative that the input comes nearest to is the one that was meant. */
-const nearest = (alternatives: readonly Complaint[][]): Complaint[] =>
-  alternatives.reduce((best, other) => (other.length < best.length ? other : best));
+/** What to do, for every complaint to which the schema itself has no sentence. */
+export const sentenceOf: z.core.$ZodErrorMap = (complaint) => {
+  if (complaint.input === undefined) return 'Fill this in.';
+  switch (complaint.code) {
+    case 'invalid_type':
+      return typeSentences[complaint.expected] ?? 'Give another kind of value.';
+    case 'invalid_value':
+      return `Choose one of: ${complaint.values.join(', ')}.`;
+    case 'invalid_format':
+      return complaint.format === 'uuid'
+        ? 'Give the id of a record, a UUID.'
+        : 'Write this in another form.';
+    case 'too_small':
+      return `Give at least ${complaint.minimum}.`;
+    case 'too_big':
+      return `Give at most ${complaint.maximum}.`;
+    case 'unrecognized_keys':
+      return 'This field is not known here; leave it out.';
+    default:
+      return 'This is not accepted here.';
+  }
+};
 
 const codes: Partial<Record<Complaint['code'], string>> = {
   too_small: 'out-of-range',
@@ -27,35 +46,34 @@ const codes: Partial<Record<Complaint['code'], string>> = {
   invalid_format: 'wrong-format',
 };
 
-function typeIssue(complaint: z.core.$ZodIssueInvalidType, path: string): Issue {
-  const { input, expected } = complaint;
-  if (input === undefined) return { path, code: 'missing', message: 'Fill this in.' };
-  const code = typeof input === 'number' ? 'not-finite' : `not-a-${expected}`;
-  return { path, code, message: typeSentences[expected] ?? complaint.message };
+function codeOf(complaint: Complaint): string {
+  if (complaint.input === undefined) return 'missing';
+  if (complaint.code !== 'invalid_type') return codes[complaint.code] ?? 'not-accepted';
+  return typeof complaint.input === 'number' ? 'not-finite' : `not-a-${complaint.expected}`;
 }
+
+/** The alternative that the input comes nearest to is the one that was meant. */
+const nearest = (alternatives: readonly Complaint[][]): Complaint[] =>
+  alternatives.reduce((best, other) => (other.length < best.length ? other : best));
 
 function issuesOf(complaint: Complaint, before: Path): Issue[] {
   const path = [...before, ...complaint.path];
-  switch (complaint.code) {
-    case 'invalid_type':
-      return [typeIssue(complaint, dotted(path))];
-    case 'unrecognized_keys':
-      return complaint.keys.map((key) => ({
-        path: dotted([...path, key]),
-        code: 'unknown-field',
-        message: 'This field is not known here; leave it out.',
-      }));
-    case 'invalid_union':
-      if (complaint.errors.length === 0) break;
-      return nearest(complaint.errors).flatMap((nested) => issuesOf(nested, path));
-    case 'invalid_value':
-      if (complaint.input === undefined)
-        return [{ path: dotted(path), code: 'missing', message: 'Fill this in.' }];
-      break;
-  }
-  const code = codes[complaint.code] ?? 'not-accepted';
-  return [{ path: dotted(path), code, message: complaint.message }];
+  const { message } = complaint;
+  if (complaint.code === 'unrecognized_keys')
+    return complaint.keys.map((key) => ({
+      path: dotted([...path, key]),
+      code: 'unknown-field',
+      message,
+    }));
+  if (complaint.code === 'invalid_union' && complaint.errors.length > 0)
+    return nearest(complaint.errors).flatMap((nested) => issuesOf(nested, path));
+  return [{ path: dotted(path), code: codeOf(complaint), message }];
 }
 
-export const issuesOfError = (error: z.ZodError): Issue[] =>
-  error.issues.flatMap((complaint) => issuesOf(complaint, []));
+/** One issue a field: the first, since what fails the form of a field fails its range as well. */
+export function issuesOfError(error: z.ZodError): Issue[] {
+  const issues = error.issues.flatMap((complaint) => issuesOf(complaint, []));
+  return issues.filter(
+    (issue, index) => issues.findIndex(({ path }) => path === issue.path) === index,
+  );
+}
