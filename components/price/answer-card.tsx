@@ -40,21 +40,23 @@ export function AnswerCard({ evidence, compared = evidence, staleReason }: Answe
     </Faded>
   );
   return (
-    <Card style={[styles.card, wide && styles.wideCard]}>
-      <View style={[styles.figures, wide && styles.wideFigures]}>
-        <Faded stale={staleReason !== undefined}>
-          <ValueLine evidence={evidence} />
-        </Faded>
-        <View style={settling}>
-          <VerdictLine evidence={compared} staleReason={staleReason} />
+    <View role="region" aria-label={priceText.title}>
+      <Card style={[styles.card, wide && styles.wideCard]}>
+        <View style={[styles.figures, wide && styles.wideFigures]}>
+          <Faded stale={staleReason !== undefined}>
+            <ValueLine evidence={evidence} />
+          </Faded>
+          <View style={settling}>
+            <VerdictLine evidence={compared} staleReason={staleReason} />
+          </View>
+          {wide || height < leastHeightForStrip ? null : strip}
+          <Faded stale={staleReason !== undefined}>
+            <TotalLine evidence={evidence} />
+          </Faded>
         </View>
-        {wide || height < leastHeightForStrip ? null : strip}
-        <Faded stale={staleReason !== undefined}>
-          <TotalLine evidence={evidence} />
-        </Faded>
-      </View>
-      {wide ? <View style={styles.wideStrip}>{strip}</View> : null}
-    </Card>
+        {wide ? <View style={styles.wideStrip}>{strip}</View> : null}
+      </Card>
+    </View>
   );
 }
 

@@ -41,12 +41,11 @@ export const quoteColumns = (desk: DeskAccess): Column<QuoteSummary>[] => [
     align: 'end',
     cell: ({ total, underlying }) => formatMoney(total, underlying.currency, 'always'),
   },
-  { id: 'by', header: quotesText.by, cell: ({ createdBy }) => createdBy.name },
   {
-    id: 'at',
-    header: quotesText.at,
+    id: 'saved',
+    header: quotesText.saved,
     align: 'end',
-    cell: ({ createdAt }) => formatInstant(createdAt, desk.timeZone),
+    cell: (quote) => <Saved quote={quote} desk={desk} />,
   },
 ];
 
@@ -56,6 +55,17 @@ function Terms({ quote }: { quote: QuoteSummary }) {
       <Text>{quote.underlying.name}</Text>
       <Text size="small" tone="muted" tabular>
         {summaryOption(quote)}
+      </Text>
+    </View>
+  );
+}
+
+function Saved({ quote, desk }: { quote: QuoteSummary; desk: DeskAccess }) {
+  return (
+    <View>
+      <Text tabular>{formatInstant(quote.createdAt, desk.timeZone)}</Text>
+      <Text size="small" tone="muted">
+        {quote.createdBy.name}
       </Text>
     </View>
   );

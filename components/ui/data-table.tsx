@@ -71,7 +71,13 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
       </View>
     );
   return (
-    <div className={tableClass(plain, sticky && wide)}>
+    // A table may be wider than a phone: its frame can then be scrolled by keys as well.
+    <div
+      className={tableClass(plain, sticky && wide)}
+      role="group"
+      aria-label={caption}
+      tabIndex={wide ? undefined : 0}
+    >
       <table className="table">
         <caption className="visually-hidden">{caption}</caption>
         <thead>

@@ -14,6 +14,7 @@ const routeLabels: Record<MethodName, string> = {
 export const routeLabel = (name: MethodName): string => routeLabels[name];
 
 export const priceText = {
+  title: 'Price',
   trusted: 'Why it can be trusted',
   moves: 'How it moves',
   assumes: 'What it assumes',
@@ -27,7 +28,6 @@ export const priceText = {
   unit: 'unit',
   position: (currency: string) => `position, ${currency}`,
   warnings: 'To know about these values',
-  cautions: 'Cautions',
   cautionsOpen: 'What this price assumes',
   errorUnknown: 'error unknown',
 } as const;

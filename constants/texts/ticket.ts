@@ -17,10 +17,7 @@ const spotLabels: Record<Underlying['kind'], string> = {
 
 export const ticketText = {
   title: 'Ticket',
-  terms: 'Terms',
-  answer: 'Price',
   underlying: 'Underlying',
-  chooseUnderlying: 'Choose an underlying',
   kind: 'Kind',
   kinds: { call: 'call', put: 'put' },
   exercise: 'Exercise',
@@ -82,20 +79,16 @@ export const ticketText = {
     `${date} ${cutoff} has passed at the desk: choose a later day.`,
 
   perUnit: (currency: string, unit: string) => `${currency} / ${unit}`,
-  plusMinus: '±',
   within: (tolerance: string) => `within ${tolerance}`,
   more: (tolerance: string) => `by more than ${tolerance}`,
   known: (tolerance: string) => `not known to ${tolerance}`,
   comparing: 'Comparing routes',
   firstPrice: 'Pricing',
-  noPriceYet: 'No price yet',
   stoppedBy: (field: string) => `Not priced: see ${field}.`,
   staleBecause: (field: string) => `Last good price; see ${field}.`,
-  cannotPrice: 'These terms could not be priced.',
   workerFailed: 'The pricing thread stopped. Reload the page; the ticket is kept.',
   position: (direction: string, size: string, unit: string, lots: string) =>
     `${direction} ${size} ${unit} × ${lots} ${lots === '1' ? 'lot' : 'lots'}`,
-  indicative: 'indicative',
 
   fromPremium: 'by premium',
   fromPremiumTitle: 'Volatility for a premium',
@@ -130,11 +123,9 @@ export const ticketText = {
   retry: 'Retry',
   discard: 'Discard',
   refusedTitle: 'The server did not take the quote',
-  notPermitted: 'Your role prices here but saves no quotes.',
-  readOnly: 'You may read this desk; pricing and saving quotes belong to other roles.',
 
   live: (value: string, unit: string, error: string, verdict: string) =>
-    `${value} ${unit}, plus or minus ${error}. ${verdict}.`,
+    `${value} ${unit}, plus or minus ${error}. ${verdict}`,
   storageFull: 'This browser keeps no drafts: what you type is lost when the page closes.',
 
   noUnderlyingsTitle: 'No underlyings on this desk yet',
