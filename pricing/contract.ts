@@ -11,7 +11,23 @@ import type { methodNames, optionKinds, pricedExercises } from './names';
 
 export { checkRequest } from './check-request';
 export { numberLimits, yearFraction } from './conventions';
-export { exercises, methodNames, optionKinds, payoffs, pricedExercises } from './names';
+export {
+  exercises,
+  ladderSeries,
+  methodNames,
+  optionKinds,
+  orderVerdicts,
+  payoffs,
+  pricedExercises,
+} from './names';
+export type {
+  LadderStep,
+  OrderFit,
+  RowFindings,
+  StudyReference,
+  StudyRow,
+  StudySummary,
+} from './study/types';
 
 export type OptionKind = (typeof optionKinds)[number];
 export type PricedExercise = (typeof pricedExercises)[number];

@@ -46,10 +46,15 @@ export type Method = {
   /** Order in the step of space (grids) or in the reciprocal of steps (walks); null: exact. */
   theoreticalOrder: number | null;
   /**
-   * By how much a study multiplies a size from row to row to see that order, where it is not 2: a
-   * scheme that is stable up to a fixed k/h² only needs four times the time steps.
+   * A scheme that is stable up to a fixed k/h² only: by how much a study multiplies the time steps
+   * where it doubles the space steps, and sizes past the limit, to show what happens there.
    */
-  studyGrowth?: { timeSteps: number };
+  stability?: {
+    timeGrowth: number;
+    pastLimit: (contract: Contract, market: Market, sizes: MethodSizes) => MethodSizes;
+  };
+  /** Priced by name and studied, but never chosen: neither a cross-check nor a tolerance takes it. */
+  byNameOnly?: true;
   machinery: readonly string[];
   defaultSettings: MethodSizes;
   /** Where a search for a tolerance starts; it doubles every size until one holds or a cap ends it. */

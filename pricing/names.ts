@@ -28,4 +28,10 @@ export const methodNames = [
   'heat-implicit',
 ] as const;
 
+/** Rows of a study that belong together: walks of odd and even length err in their own ways. */
+export const ladderSeries = ['all', 'odd', 'even'] as const;
+
+/** What the rows of a study say about the order that a method promises. */
+export const orderVerdicts = ['as-expected', 'lower', 'higher', 'not-determined'] as const;
+
 export const smoothings = ['none', 'richardson'] as const;

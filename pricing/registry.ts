@@ -26,6 +26,7 @@ export function methodNamed(name: MethodName): Method {
   return method;
 }
 
+/** The methods that may be chosen for a contract. */
 export function methodsFor(contract: Contract, market: Market): Method[] {
-  return methods.filter((method) => method.prices(contract, market));
+  return methods.filter((method) => !method.byNameOnly && method.prices(contract, market));
 }

@@ -62,6 +62,7 @@ export const heatImplicit: Method = {
   machinery: ['uniform finite-difference grid', 'heat coordinates', 'implicit step'],
   defaultSettings: defaults,
   coarsestSettings: { spaceSteps: 64, timeSteps: 8, smoothing: 'richardson' },
+  byNameOnly: true,
   prices: (contract) => contract.payoff === 'vanilla',
   work: ({ spaceSteps = defaults.spaceSteps, timeSteps = defaults.timeSteps }) =>
     14 * spaceSteps * timeSteps,

@@ -31,8 +31,9 @@ const importRules = [
   {
     importer: ['server', 'scripts', 'hooks'],
     banned: ['pricing'],
-    except: ['pricing/index.ts', 'pricing/contract.ts'],
-    sentence: 'The engine has one door, pricing/index (and pricing/contract for its types).',
+    except: ['pricing/index.ts', 'pricing/contract.ts', 'pricing/study.ts'],
+    sentence:
+      'The engine has one door, pricing/index (pricing/contract for its types, pricing/study for convergence studies).',
   },
   {
     importer: ['components/ui'],
