@@ -5,10 +5,12 @@
  * nothing typed is lost. A call that needs the password again waits for it in the same way.
  */
 import { QueryClient } from '@tanstack/react-query';
+import { z } from 'zod';
 import { ApiError, callEndpoint, type CallInput } from '@/shared/api-client';
 import { endpoints } from '@/shared/contracts';
 import type { Me, Session } from '@/shared/contracts/sessions';
 import type { Endpoint, ResponseOf } from '@/shared/endpoint';
+import { readStored, writeStored } from './local-store';
 
 /** What the tab asks of the person before waiting calls can go on. */
 export type Prompt = 'sign-in-again' | 'confirm-password';
@@ -18,6 +20,9 @@ export type SessionState = {
   me: Me | null;
   prompt: Prompt | null;
 };
+
+/** Scripts cannot see the refresh cookie; this remembers that there may be one to bring back. */
+const signedInKey = 'driftless.signed-in';
 
 let state: SessionState = { status: 'unknown', me: null, prompt: null };
 let accessToken: string | undefined;
@@ -59,6 +64,7 @@ function adopt(session: Session) {
     queryClient.clear();
     settlePrompt(false);
   }
+  writeStored(signedInKey, true);
   setState({ status: 'signed-in', me: session.me });
 }
 
@@ -67,6 +73,7 @@ export function forgetSession(): void {
   accessToken = undefined;
   queryClient.clear();
   settlePrompt(false);
+  writeStored(signedInKey, false);
   setState({ status: 'signed-out', me: null });
 }
 
@@ -164,6 +171,7 @@ export async function reloadMe(): Promise<void> {
 
 /** On opening the page: is there a session that the cookie can bring back? */
 export async function restoreSession(): Promise<void> {
+  if (readStored(signedInKey, z.boolean()) !== true) return forgetSession();
   try {
     await refresh();
   } catch (error) {

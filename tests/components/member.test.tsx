@@ -83,6 +83,7 @@ async function open(role: DeskRole, user = head) {
     const { status, body } = answer();
     return reply(status, body);
   }) as typeof fetch;
+  localStorage.setItem('driftless.signed-in', 'true');
   await restoreSession();
   render(
     <QueryClientProvider client={queryClient}>

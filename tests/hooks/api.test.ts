@@ -74,6 +74,7 @@ async function failureOf(work: Promise<unknown>): Promise<string> {
 }
 
 beforeEach(async () => {
+  localStorage.setItem('driftless.signed-in', 'true');
   requests = [];
   tokens = 0;
   signedIn = analyst;
@@ -95,6 +96,13 @@ test('the cookie brings the session back, and its token goes with each call', as
   expect(api.readSession()).toMatchObject({ status: 'signed-in', me: { user: analyst } });
   await listPeople();
   expect(requests.at(-1)).toMatchObject({ route: people, token: 'token-1' });
+});
+
+test('a browser in which nobody has signed in does not ask for a session', async () => {
+  localStorage.clear();
+  await api.restoreSession();
+  expect(api.readSession()).toMatchObject({ status: 'signed-out', me: null });
+  expect(requests).toEqual([]);
 });
 
 test('without a cookie the person is signed out, which is no failure', async () => {

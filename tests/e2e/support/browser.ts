@@ -25,6 +25,9 @@ const args = [
 export const launchBrowser = (): Promise<Browser> =>
   chromium.launch({ executablePath: '/usr/bin/chromium', args });
 
+/** Far more than a healthy page takes; a missing thing is reported before the test's own limit. */
+const actionTimeoutMs = 15_000;
+
 export type Visit = { context: BrowserContext; page: Page; complaints: string[] };
 
 /**
@@ -37,6 +40,7 @@ export async function visit(
   colorScheme: 'light' | 'dark' = 'light',
 ): Promise<Visit> {
   const context = await browser.newContext({ viewport, colorScheme, baseURL: baseUrl() });
+  context.setDefaultTimeout(actionTimeoutMs);
   const page = await context.newPage();
   const complaints: string[] = [];
   page.on('pageerror', (error) => complaints.push(error.message));
