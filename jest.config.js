@@ -20,6 +20,7 @@ function project(displayName, settings) {
     testEnvironment: 'node',
     moduleNameMapper: alias,
     modulePathIgnorePatterns: ignoredFolders,
+    setupFilesAfterEnv: ['<rootDir>/tests/patience.ts'],
     transform: transformWith(false),
     transformIgnorePatterns: [`/node_modules/(?!(${modulesOnly.join('|')})/)`],
     ...settings,
@@ -35,6 +36,7 @@ const node = project('node', {
 /** react-native-web in jsdom, without Babel: the components that the browser gets. */
 const web = project('web', {
   testEnvironment: 'jsdom',
+  setupFilesAfterEnv: ['<rootDir>/tests/patience.ts', '<rootDir>/tests/patience-web.ts'],
   testMatch: ['<rootDir>/tests/{components,hooks,app}/**/*.test.{ts,tsx}'],
   moduleNameMapper: {
     ...alias,
