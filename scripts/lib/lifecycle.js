@@ -4,6 +4,7 @@
  */
 const { spawn } = require('node:child_process');
 const { root } = require('./paths');
+const { descendants, signal } = require('./processes');
 
 /** Something the person can put right: shown as its one sentence, without a stack. */
 class Refusal extends Error {}
@@ -57,13 +58,18 @@ function startChild(command, args, options = {}) {
   return { child, ended };
 }
 
-/** Asks a child to end, and ends it when it has not done so in time. */
+/**
+ * Asks a child to end, and ends it when it has not done so in time; what it started itself and
+ * left behind, such as the test runner's workers, is ended after it.
+ */
 async function endChild({ child, ended }, timeoutMs) {
   if (child.exitCode !== null || child.signalCode !== null) return;
+  const below = descendants(child.pid);
   child.kill('SIGTERM');
   const timer = setTimeout(() => child.kill('SIGKILL'), timeoutMs);
   await ended;
   clearTimeout(timer);
+  for (const pid of below) signal(pid, 'SIGKILL');
 }
 
 /** Runs a command to its end; gives its exit code. */

@@ -16,6 +16,19 @@ function commandLine(pid) {
   return (readProc(pid, 'cmdline') ?? '').split('\0').filter((word) => word !== '');
 }
 
+/** Every process below this one: children, their children, and so on. */
+function descendants(pid) {
+  const parents = fs
+    .readdirSync('/proc')
+    .filter((name) => /^\d+$/.test(name))
+    // The name of the program stands in brackets and may hold anything; state and parent follow.
+    .map((name) => [Number(name), (readProc(name, 'stat') ?? '').split(') ').at(-1).split(' ')[1]])
+    .map(([child, parent]) => ({ child, parent: Number(parent) }));
+  const below = (one) =>
+    parents.filter(({ parent }) => parent === one).flatMap(({ child }) => [child, ...below(child)]);
+  return below(pid);
+}
+
 /** Waits until the process is gone; false when it still runs after the time given. */
 async function waitForEnd(pid, timeoutMs) {
   const deadline = Date.now() + timeoutMs;
@@ -34,4 +47,4 @@ function signal(pid, name) {
   }
 }
 
-module.exports = { commandLine, waitForEnd, signal };
+module.exports = { commandLine, descendants, waitForEnd, signal };
