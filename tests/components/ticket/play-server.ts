@@ -1,40 +1,7 @@
 /** A server of one desk that prices what it is sent, and can be away. */
-import { compareRoutes, engineVersion, priceRoutes } from '@/pricing/index';
-import { quoteDraftSchema, type Quote, type QuoteDraft } from '@/shared/contracts/quotes';
-import { positionTotal, pricingRequestOf } from '@/shared/quote-terms';
-import { desk, share, wheat } from '../../hooks/ticket-examples';
-
-const maker = { id: '22222222-2222-4222-8222-222222222222', name: 'Analyst' };
-
-function quoteFor(draft: QuoteDraft, count: number): Quote {
-  const { contract, market } = pricingRequestOf(draft, desk);
-  const routes = priceRoutes(contract, market);
-  const primary = routes.find(({ result }) => result.ok);
-  if (!primary?.result.ok) throw new Error('The example cannot be priced.');
-  const { value, errorEstimate } = primary.result;
-  const { verdict, refuted } = compareRoutes(routes, wheat.tolerance);
-  return {
-    ...draft,
-    id: `55555555-5555-4555-8555-55555555555${count}`,
-    number: `Q-000${count}`,
-    underlying: wheat,
-    value,
-    errorEstimate,
-    total: positionTotal(value, draft),
-    tolerance: wheat.tolerance,
-    verdict,
-    refuted,
-    strip: [],
-    createdBy: maker,
-    createdAt: '2026-12-01T10:00:05Z',
-    expiryAt: '2027-03-01T16:30:00Z',
-    expiryYears: contract.expiry,
-    snapshotId: null,
-    primaryRoute: primary.name,
-    routes,
-    engine: engineVersion,
-  };
-}
+import { quoteDraftSchema, type Quote } from '@/shared/contracts/quotes';
+import { share, wheat } from '../../hooks/ticket-examples';
+import { quoteFor } from '../play-quotes';
 
 const answerOf = (status: number, body: unknown) => ({
   ok: status < 400,

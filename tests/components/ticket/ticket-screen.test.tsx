@@ -11,7 +11,7 @@ import { desk, wheat } from '../../hooks/ticket-examples';
 import { playServer } from './play-server';
 
 jest.mock('expo-router', () => ({ useRouter: () => ({ push: jest.fn(), replace: jest.fn() }) }));
-jest.mock('@/hooks/pricing-thread', () => jest.requireActual('./play-thread'));
+jest.mock('@/hooks/pricing-thread', () => jest.requireActual('../play-thread'));
 
 // Real prices by three routes at each key: a busy machine takes its time.
 jest.setTimeout(60_000);

@@ -1,7 +1,13 @@
 /** The pricing thread of a test: the same engine, in the test's own thread. */
 import { createPricingClient } from '@/hooks/pricing-client';
 import type { PricingMessage, PricingReply } from '@/hooks/pricing-messages';
-import { compareRoutes, impliedVolatility, priceRoutes, strikeForDelta } from '@/pricing/index';
+import {
+  compareRoutes,
+  impliedVolatility,
+  price,
+  priceRoutes,
+  strikeForDelta,
+} from '@/pricing/index';
 
 let tell: (reply: PricingReply) => void = () => undefined;
 
@@ -20,8 +26,14 @@ function answer({ sequence, task }: PricingMessage): PricingReply {
       };
     case 'strike':
       return { sequence, kind: 'solution', solution: strikeForDelta(task.request, task.delta) };
-    case 'reprice':
-      throw new Error('The ticket never asks for this.');
+    case 'reprice': {
+      const { contract, market, methods } = task;
+      const routes = methods.map((method) => ({
+        name: method.name,
+        result: price({ contract, market, method }),
+      }));
+      return { sequence, kind: 'routes', routes, comparison: null };
+    }
   }
 }
 
