@@ -135,11 +135,7 @@ const columns = (timeZone: string): Column<AccessEvent>[] => [
     id: 'at',
     header: changesText.at,
     nowrap: true,
-    cell: ({ at }) => (
-      <Text tone="muted" tabular>
-        {formatInstant(at, timeZone)}
-      </Text>
-    ),
+    cell: ({ at }) => formatInstant(at, timeZone),
   },
   { id: 'subject', header: changesText.subject, nowrap: true, cell: ({ subject }) => subject.name },
   { id: 'what', header: changesText.what, cell: describe },
