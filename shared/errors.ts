@@ -61,6 +61,21 @@ const errorTable = {
     retryable: false,
     sentence: 'This needs someone else: nobody changes their own permissions.',
   },
+  'own-trade': {
+    status: 403,
+    retryable: false,
+    sentence: 'This needs someone else than who proposed the trade or amended it last.',
+  },
+  'move-not-allowed': {
+    status: 409,
+    retryable: false,
+    sentence: 'This cannot be done with the trade as it stands now.',
+  },
+  'own-work': {
+    status: 403,
+    retryable: false,
+    sentence: 'This needs someone else: nobody approves or signs off their own work.',
+  },
   'control-role': {
     status: 403,
     retryable: false,
@@ -76,6 +91,11 @@ const errorTable = {
     status: 409,
     retryable: false,
     sentence: 'Someone changed this record meanwhile. Read it again, then repeat your change.',
+  },
+  'wrong-state': {
+    status: 409,
+    retryable: false,
+    sentence: 'The record is no longer in a state that allows this. Read it again.',
   },
   'idempotency-key-missing': {
     status: 400,

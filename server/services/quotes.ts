@@ -13,6 +13,7 @@ import { Desk } from '../models/desk';
 import { Quote } from '../models/quote';
 import { Underlying } from '../models/underlying';
 import type { DeskActor } from './access';
+import { containing } from './containing';
 import { after, pageOf } from './page';
 import { priceRoutes } from './pricing';
 import { quoteIssues, ticketIssue } from './quote-issues';
@@ -119,9 +120,6 @@ async function findQuote(desk: Desk, id: string, transaction?: Transaction): Pro
 
 export const getQuote = async (desk: Desk, id: string): Promise<QuoteOnTheWire> =>
   quoteOf(await findQuote(desk, id));
-
-/** Typed text is no pattern: its wildcards stand for themselves. */
-const containing = (text: string) => `%${text.replace(/[\\%_]/g, '\\$&')}%`;
 
 function matching(search: string | undefined): WhereOptions {
   if (search === undefined || search === '') return {};

@@ -48,17 +48,19 @@ export const quoteDraftSchema = quoteTermsSchema.extend({
 });
 export type QuoteDraft = z.infer<typeof quoteDraftSchema>;
 
-const quotedUnderlyingSchema = z.object({
-  id: idSchema,
-  symbol: z.string().describe('Short name'),
-  name: z.string().describe('Full name'),
-  currency: currencySchema,
-  unit: z.string().describe('What one unit is'),
-  priceDecimals: z
-    .number()
-    .int()
-    .meta({ unit: 'decimals', description: 'Decimals that a price is shown with' }),
-});
+export const quotedUnderlyingSchema = z
+  .object({
+    id: idSchema,
+    symbol: z.string().describe('Short name'),
+    name: z.string().describe('Full name'),
+    currency: currencySchema,
+    unit: z.string().describe('What one unit is'),
+    priceDecimals: z
+      .number()
+      .int()
+      .meta({ unit: 'decimals', description: 'Decimals that a price is shown with' }),
+  })
+  .describe('What the option is on');
 
 /** What the list shows of a quote: enough for a row with its agreement strip. */
 export const quoteSummarySchema = z.object({
