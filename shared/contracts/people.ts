@@ -37,7 +37,9 @@ const activeChangeSchema = z.object({
 });
 
 export const memberSchema = z.object({
-  user: personSchema.extend({ email: z.string().describe('E-mail address') }),
+  user: personSchema
+    .extend({ email: z.string().describe('E-mail address') })
+    .describe('The member'),
   role: roleSchema,
   memberSince: dateSchema,
   suspendedAt: instantSchema.nullable(),

@@ -22,13 +22,15 @@ const marketNumbers = {
   volatility: numberOf('1/sqrt(year)', 'Volatility'),
 };
 
-export const marketSchema = z.union([
-  z.strictObject({
-    ...marketNumbers,
-    yield: numberOf('1/year', 'Continuous dividend yield or foreign rate'),
-  }),
-  z.strictObject({ ...marketNumbers, carry: z.literal('future').describe('A future') }),
-]) satisfies z.ZodType<Market>;
+export const marketSchema = z
+  .union([
+    z.strictObject({
+      ...marketNumbers,
+      yield: numberOf('1/year', 'Continuous dividend yield or foreign rate'),
+    }),
+    z.strictObject({ ...marketNumbers, carry: z.literal('future').describe('A future') }),
+  ])
+  .describe('Market numbers that price one option') satisfies z.ZodType<Market>;
 
 const sizeOf = (description: string) =>
   z.number().int().meta({ unit: 'steps', description }).optional();

@@ -22,7 +22,9 @@ export const deskAccessSchema = z
 export type DeskAccess = z.infer<typeof deskAccessSchema>;
 
 export const meSchema = z.object({
-  user: personSchema.extend({ email: z.string().describe('E-mail address') }),
+  user: personSchema
+    .extend({ email: z.string().describe('E-mail address') })
+    .describe('The person who is signed in'),
   desks: z.array(deskAccessSchema).describe('Desks of this person, by name'),
 });
 export type Me = z.infer<typeof meSchema>;
