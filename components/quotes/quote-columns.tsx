@@ -44,7 +44,6 @@ export const quoteColumns = (desk: DeskAccess): Column<QuoteSummary>[] => [
   {
     id: 'saved',
     header: quotesText.saved,
-    align: 'end',
     cell: (quote) => <Saved quote={quote} desk={desk} />,
   },
 ];
