@@ -60,6 +60,7 @@ export function AgreementFigures({
         <Text>{findingOf(agreement)}</Text>
       </View>
       <DataTable
+        plain
         caption={agreementText.table}
         columns={columnsOf(agreement)}
         rows={agreement.routes}
