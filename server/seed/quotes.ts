@@ -16,6 +16,8 @@ type Pattern = Pick<QuoteDraft, 'kind' | 'exercise' | 'direction' | 'quantity' |
   tenor: string;
   /** Where the market stood against its close. */
   move: number;
+  /** Numbers asked for in place of the close's. */
+  assumed?: { rate: number; volatility: number; yield: number };
 };
 
 const patterns: readonly Pattern[] = [
@@ -61,13 +63,26 @@ const patterns: readonly Pattern[] = [
   },
 ];
 
+/** Dear money and a calm market: the drift outweighs the moves, and the walks say that they are rough. */
+const roughPattern: Pattern = {
+  kind: 'put',
+  exercise: 'american',
+  direction: 'sell',
+  quantity: '1',
+  moneyness: 1,
+  tenor: '10y',
+  move: 0,
+  assumed: { rate: 0.1, volatility: 0.1, yield: 0 },
+  note: 'What if money were dear for ten years; not for a client',
+};
+
 const minuteMs = 60_000;
 const spacingMs = 25 * minuteMs;
 
 const rounded = (value: number, decimals: number) => Number(value.toFixed(decimals));
 
-function marketAt({ market, priceDecimals }: SeedUnderlying, move: number): Market {
-  return { ...market, spot: rounded(market.spot * (1 + move), priceDecimals) };
+function marketAt({ market, priceDecimals }: SeedUnderlying, { move, assumed }: Pattern): Market {
+  return { ...market, ...assumed, spot: rounded(market.spot * (1 + move), priceDecimals) };
 }
 
 /** What the ticket showed: the browser prices with the same engine. */
@@ -80,16 +95,20 @@ async function indicativeValue(terms: Omit<QuoteDraft, 'indicativeValue'>, actor
 
 async function seedQuote(actor: DeskActor, listed: Listed, pattern: Pattern, pricedAt: Date) {
   const { id, underlying } = listed;
-  const { moneyness, tenor, move, ...kept } = pattern;
+  const { moneyness, tenor, kind, exercise, direction, quantity, note } = pattern;
   const expiryDate = dateOfTenor(tenor, today(actor.desk));
   if (expiryDate === null) throw new Error(`${tenor} is no tenor.`);
   const terms = {
-    ...kept,
+    kind,
+    exercise,
+    direction,
+    quantity,
+    note,
     underlyingId: id,
     contractSize: underlying.contractSize,
     strike: (underlying.market.spot * moneyness).toFixed(underlying.priceDecimals),
     expiryDate,
-    market: marketAt(underlying, move),
+    market: marketAt(underlying, pattern),
     pricedAt: pricedAt.toISOString(),
   };
   const draft = { ...terms, indicativeValue: await indicativeValue(terms, actor) };
@@ -102,9 +121,11 @@ export async function seedQuotes(
   listed: readonly Listed[],
   patternCount: number,
 ) {
-  const planned = patterns
+  const usual = patterns
     .slice(0, patternCount)
     .flatMap((pattern) => listed.map((each) => ({ pattern, listed: each })));
+  const shares = listed.filter(({ underlying }) => underlying.kind === 'share').slice(0, 1);
+  const planned = [...usual, ...shares.map((each) => ({ pattern: roughPattern, listed: each }))];
   const now = Date.now();
   for (const [index, plan] of planned.entries()) {
     const pricedAt = new Date(now - (planned.length - index) * spacingMs);

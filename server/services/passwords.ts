@@ -24,4 +24,8 @@ export async function passwordFits(password: string, hash: string | null): Promi
   return fits && hash !== null;
 }
 
-export const closePasswordThreads = () => pool.destroy();
+/** Requests have been answered by then; only the hash that none of them waits for may be under way. */
+export async function closePasswordThreads() {
+  await unknownAccountHash;
+  await pool.destroy();
+}
