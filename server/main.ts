@@ -6,6 +6,7 @@ import { sequelize } from './database';
 import { env } from './env';
 import { log } from './log';
 import { migrate } from './migrate';
+import { closeExportThreads } from './services/export-file';
 import { closePasswordThreads, hashOfNobody } from './services/passwords';
 import { closePricingThreads } from './services/pricing';
 import { close, listen } from './web';
@@ -56,7 +57,7 @@ async function stop(cause: string) {
   setTimeout(() => process.exit(1), stopLimitMs).unref();
   if (server) await close(server);
   if (worker) await worker.stop();
-  await Promise.all([closePasswordThreads(), closePricingThreads()]);
+  await Promise.all([closePasswordThreads(), closePricingThreads(), closeExportThreads()]);
   await sequelize.close();
   process.exit(0);
 }

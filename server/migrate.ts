@@ -4,6 +4,7 @@ import { Umzug } from 'umzug';
 import { log } from './log';
 import { migrations } from './migrations';
 import type { MigrationContext } from './migrations/migration';
+import { prepareQueue } from './queue/prepare';
 
 /** Any number will do, as long as every version of the migrator takes the same lock. */
 const migrationLock = 4_600_001;
@@ -49,6 +50,7 @@ export async function migrate(ownerUrl: string, appUrl: string): Promise<string[
     await client.query('COMMIT');
     const names = taken.map(({ name }) => name);
     if (names.length > 0) log.info({ migrations: names }, 'schema migrated');
+    await prepareQueue(appUrl);
     return names;
   } finally {
     await client.end();

@@ -1,16 +1,11 @@
 /** The worker: takes jobs from the queue in the database. Any number may run, on any machine. */
-import { Logger, parseCronItems, run, type Runner } from 'graphile-worker';
+import { parseCronItems, run, type Runner } from 'graphile-worker';
 import { Pool } from 'pg';
 import { env } from './env';
 import { log } from './log';
+import { logger } from './queue/logger';
 import { workerName } from './queue/name';
-import { housekeeping } from './queue/tasks/housekeeping';
-
-const levels = { error: 'error', warning: 'warn', info: 'debug', debug: 'trace' } as const;
-
-const logger = new Logger((scope) => (level, message, meta) => {
-  log[levels[level]]({ ...scope, ...meta }, message);
-});
+import { taskList } from './queue/task-list';
 
 const cronItems = parseCronItems([
   { task: 'housekeeping', match: '17 * * * *', options: { backfillPeriod: 0 } },
@@ -33,7 +28,7 @@ export async function startWorker(): Promise<Worker> {
   pgPool.on('connect', (client) => client.on('error', onLost));
   const runner: Runner = await run({
     pgPool,
-    taskList: { housekeeping },
+    taskList,
     parsedCronItems: cronItems,
     concurrency,
     noHandleSignals: true,

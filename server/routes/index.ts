@@ -3,7 +3,10 @@ import { Router } from 'express';
 import { pipeline } from '../middleware/pipeline';
 import { unknownPath, wrongMethod } from '../middleware/problem';
 import type { Route } from '../middleware/route';
+import { chainRoutes } from './chains';
+import { exportRoutes } from './exports';
 import { healthRoutes } from './health';
+import { historyRoutes } from './history';
 import { peopleRoutes } from './people';
 import { quoteRoutes } from './quotes';
 import { sessionRoutes } from './sessions';
@@ -15,6 +18,9 @@ export const routes: readonly Route[] = [
   ...peopleRoutes,
   ...underlyingRoutes,
   ...quoteRoutes,
+  ...chainRoutes,
+  ...historyRoutes,
+  ...exportRoutes,
 ];
 
 const register = {

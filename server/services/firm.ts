@@ -4,9 +4,9 @@ import { AppError } from '@/shared/errors';
 import type { DeskRole } from '@/shared/permissions';
 import { sequelize } from '../database';
 import { Desk } from '../models/desk';
-import { Grant } from '../models/grant';
 import { Membership } from '../models/membership';
 import { User } from '../models/user';
+import { addGrant } from './grant-records';
 import { hashPassword } from './passwords';
 
 const shortestPasswordBytes = 10;
@@ -42,8 +42,8 @@ export const appointMember = (desk: Desk, { userId, role, reason, madeById }: Ap
   sequelize.transaction(async (transaction) => {
     const memberSince = dateInZone(Date.now(), desk.timeZone);
     await Membership.create({ deskId: desk.id, userId, role, memberSince }, { transaction });
-    await Grant.create(
+    await addGrant(
       { deskId: desk.id, subjectId: userId, kind: 'role-set', role, reason, madeById },
-      { transaction },
+      transaction,
     );
   });

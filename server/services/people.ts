@@ -1,6 +1,7 @@
 /**
  * What a desk head may change about a member. Every change is one transaction that locks the desk,
- * looks at who is asking once more, and adds the row to `grants` that says what was done and why.
+ * looks at who is asking once more, and adds the row to `grants` that says what was done and why; the
+ * same is sealed into the desk's records.
  */
 import { Op, type Transaction } from 'sequelize';
 import type { Member } from '@/shared/contracts/people';
@@ -14,7 +15,7 @@ import {
 } from '@/shared/permissions';
 import { sequelize } from '../database';
 import { Desk } from '../models/desk';
-import { Grant } from '../models/grant';
+import type { Grant } from '../models/grant';
 import { Membership } from '../models/membership';
 import {
   asPermissionChange,
@@ -25,6 +26,7 @@ import {
   type ActiveChange,
   type DeskActor,
 } from './access';
+import { addGrant } from './grant-records';
 import { readMember } from './members';
 import { brokenSegregationFrom, type DatedChange } from './segregation';
 import type { WriteOnce } from './write-once';
@@ -79,7 +81,7 @@ async function changeMember(
     const { membership, event } = await decide(subject);
     const version = subject.membership.version + 1;
     await subject.membership.update({ ...membership, version }, { transaction });
-    await Grant.create(
+    await addGrant(
       {
         ...event,
         deskId: actor.desk.id,
@@ -87,7 +89,7 @@ async function changeMember(
         reason: change.reason,
         madeById: actor.userId,
       },
-      { transaction },
+      transaction,
     );
     return readMember(actor.desk, change.userId, transaction);
   });

@@ -1,5 +1,8 @@
 /** Every endpoint there is, by name: routes, OpenAPI and the role test are driven by this list. */
+import * as chain from './chain';
+import * as historyExports from './exports';
 import * as health from './health';
+import * as history from './history';
 import * as people from './people';
 import * as quotes from './quotes';
 import * as sessions from './sessions';
@@ -24,6 +27,15 @@ export const endpoints = {
   createQuote: quotes.createQuote,
   listQuotes: quotes.listQuotes,
   getQuote: quotes.getQuote,
+  getChains: chain.getChains,
+  startVerification: chain.startVerification,
+  getVerification: chain.getVerification,
+  listHistory: history.listHistory,
+  getHistoryValue: history.getHistoryValue,
+  createExport: historyExports.createExport,
+  listExports: historyExports.listExports,
+  getExport: historyExports.getExport,
+  getExportFile: historyExports.getExportFile,
 } satisfies Record<string, Endpoint>;
 
 export type EndpointName = keyof typeof endpoints;

@@ -1,5 +1,174 @@
 CREATE SCHEMA public;
 COMMENT ON SCHEMA public IS 'standard public schema';
+CREATE FUNCTION public.append(chain_name text, bodies text[]) RETURNS TABLE(entry_position bigint, entry_at text, entry_hash text)
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$
+  DECLARE
+    first_position bigint;
+    head chain_heads;
+    moment text;
+    hashes text[] := ARRAY[]::text[];
+    sealed text;
+    each_body text;
+  BEGIN
+    IF coalesce(array_ndims(bodies), 1) <> 1 OR cardinality(bodies) NOT BETWEEN 1 AND 1000 THEN
+      RAISE EXCEPTION 'append takes 1 to 1000 bodies'
+        USING ERRCODE = 'invalid_parameter_value';
+    END IF;
+    first_position := lock_chain(chain_name) + 1;
+    SELECT * INTO STRICT head FROM chain_heads WHERE chain = chain_name;
+    -- A clock that was set back does not turn the order of the entries round.
+    moment := greatest(head.at,
+      to_char(clock_timestamp() AT TIME ZONE 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.US"Z"') COLLATE "C");
+    sealed := head.hash;
+    FOREACH each_body IN ARRAY bodies LOOP
+      IF each_body IS NULL THEN
+        RAISE EXCEPTION 'a body is missing' USING ERRCODE = 'null_value_not_allowed';
+      END IF;
+      sealed := chain_hash(sealed, chain_name, first_position + cardinality(hashes), moment,
+        each_body);
+      hashes := array_append(hashes, sealed);
+    END LOOP;
+    RETURN QUERY
+      INSERT INTO chain_entries AS entry (chain, position, at, previous, hash, body)
+      SELECT chain_name, first_position + place - 1, moment,
+        CASE place WHEN 1 THEN head.hash ELSE hashes[place - 1] END, hashes[place], body
+      FROM unnest(bodies) WITH ORDINALITY AS given (body, place)
+      ORDER BY place
+      RETURNING entry.position, entry.at, entry.hash;
+    UPDATE chain_heads
+      SET position = first_position + cardinality(hashes) - 1, at = moment, hash = sealed
+      WHERE chain = chain_name;
+  END $$;
+CREATE FUNCTION public.chain_hash(previous text, chain text, pos bigint, at text, body text) RETURNS text
+    LANGUAGE sql IMMUTABLE STRICT PARALLEL SAFE
+    SET search_path TO 'pg_catalog', 'pg_temp'
+    AS $$
+    SELECT encode(sha256(
+      decode(previous, 'hex') || string_agg(
+        int4send(octet_length(convert_to(field, 'UTF8'))) || convert_to(field, 'UTF8'),
+        ''::bytea ORDER BY place)), 'hex')
+    FROM unnest(ARRAY[chain, pos::text, at, body]) WITH ORDINALITY AS fields (field, place)
+  $$;
+CREATE FUNCTION public.lock_chain(chain_name text) RETURNS bigint
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$
+  DECLARE
+    head_position bigint;
+  BEGIN
+    SELECT position INTO STRICT head_position FROM chain_heads
+      WHERE chain = chain_name FOR UPDATE;
+    RETURN head_position;
+  END $$;
+CREATE FUNCTION public.refuse_change() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+  BEGIN
+    RAISE EXCEPTION '% of % is refused: the chain only grows', TG_OP, TG_TABLE_NAME
+      USING ERRCODE = 'integrity_constraint_violation';
+  END $$;
+CREATE FUNCTION public.refuse_step_back() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+  BEGIN
+    IF NEW.chain <> OLD.chain OR NEW.position <= OLD.position OR NEW.at < OLD.at THEN
+      RAISE EXCEPTION 'the head of a chain only goes forward'
+        USING ERRCODE = 'integrity_constraint_violation';
+    END IF;
+    RETURN NEW;
+  END $$;
+CREATE FUNCTION public.start_chains() RETURNS trigger
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$
+  BEGIN
+    INSERT INTO chain_heads (chain, position, at, hash)
+      SELECT kind || '/' || NEW.id, 0, '', repeat('0', 64)
+      FROM unnest(ARRAY['valuations', 'records']) AS kinds (kind);
+    RETURN NULL;
+  END $$;
+CREATE TABLE public.chain_anchors (
+    id uuid NOT NULL,
+    chain text NOT NULL,
+    "position" bigint NOT NULL,
+    hash text NOT NULL,
+    signed_at timestamp(3) with time zone NOT NULL,
+    purpose text NOT NULL,
+    key_id text NOT NULL,
+    signature text NOT NULL,
+    CONSTRAINT chain_anchors_hash_check CHECK ((hash ~ '^[0-9a-f]{64}$'::text)),
+    CONSTRAINT chain_anchors_key_id_check CHECK ((key_id ~ '^[0-9a-f]{16}$'::text)),
+    CONSTRAINT chain_anchors_position_check CHECK (("position" >= 1)),
+    CONSTRAINT chain_anchors_purpose_check CHECK ((purpose = ANY (ARRAY['sign-off'::text, 'export'::text]))),
+    CONSTRAINT chain_anchors_signature_check CHECK ((signature ~ '^[0-9a-f]{128}$'::text))
+);
+CREATE TABLE public.chain_entries (
+    chain text NOT NULL,
+    "position" bigint NOT NULL,
+    at text NOT NULL COLLATE pg_catalog."C",
+    previous text NOT NULL,
+    hash text NOT NULL,
+    body text NOT NULL,
+    kind text GENERATED ALWAYS AS (((body)::jsonb ->> 'kind'::text)) STORED NOT NULL,
+    subject_id uuid GENERATED ALWAYS AS ((((body)::jsonb #>> '{subject,id}'::text[]))::uuid) STORED,
+    run_id uuid GENERATED ALWAYS AS ((((body)::jsonb ->> 'runId'::text))::uuid) STORED,
+    run_number text GENERATED ALWAYS AS (((body)::jsonb ->> 'runNumber'::text)) STORED,
+    trade_number text GENERATED ALWAYS AS (((body)::jsonb ->> 'tradeNumber'::text)) STORED,
+    trade_version_id uuid GENERATED ALWAYS AS ((((body)::jsonb ->> 'tradeVersionId'::text))::uuid) STORED,
+    book_id uuid GENERATED ALWAYS AS ((((body)::jsonb ->> 'bookId'::text))::uuid) STORED,
+    underlying_id uuid GENERATED ALWAYS AS ((((body)::jsonb ->> 'underlyingId'::text))::uuid) STORED,
+    route text GENERATED ALWAYS AS (((body)::jsonb ->> 'route'::text)) STORED,
+    role text GENERATED ALWAYS AS (((body)::jsonb ->> 'role'::text)) STORED,
+    verdict text GENERATED ALWAYS AS (((body)::jsonb ->> 'verdict'::text)) STORED,
+    valued_at text GENERATED ALWAYS AS (((body)::jsonb ->> 'valuedAt'::text)) STORED COLLATE pg_catalog."C",
+    CONSTRAINT chain_entries_body_check CHECK ((octet_length(body) <= 262144)),
+    CONSTRAINT chain_entries_check CHECK (((kind = 'valuation'::text) = (chain ~~ 'valuations/%'::text))),
+    CONSTRAINT chain_entries_check1 CHECK (((kind <> 'valuation'::text) OR ((run_id IS NOT NULL) AND (run_number IS NOT NULL) AND (trade_number IS NOT NULL) AND (trade_version_id IS NOT NULL) AND (book_id IS NOT NULL) AND (underlying_id IS NOT NULL) AND (route IS NOT NULL) AND (role = ANY (ARRAY['primary'::text, 'check'::text])) AND (valued_at ~ '^[0-9]{4}-[0-9]{2}-[0-9]{2}T[0-9]{2}:[0-9]{2}:[0-9]{2}[.][0-9]{3}Z$'::text)))),
+    CONSTRAINT chain_entries_check2 CHECK (((kind = 'valuation'::text) OR (subject_id IS NOT NULL))),
+    CONSTRAINT chain_entries_hash_check CHECK ((hash ~ '^[0-9a-f]{64}$'::text)),
+    CONSTRAINT chain_entries_position_check CHECK (("position" >= 1)),
+    CONSTRAINT chain_entries_previous_check CHECK ((previous ~ '^[0-9a-f]{64}$'::text))
+);
+CREATE TABLE public.chain_heads (
+    chain text NOT NULL,
+    desk_id uuid GENERATED ALWAYS AS ((split_part(chain, '/'::text, 2))::uuid) STORED NOT NULL,
+    "position" bigint NOT NULL,
+    at text NOT NULL COLLATE pg_catalog."C",
+    hash text NOT NULL,
+    CONSTRAINT chain_heads_chain_check CHECK ((chain ~ '^(valuations|records)/[0-9a-f-]{36}$'::text)),
+    CONSTRAINT chain_heads_hash_check CHECK ((hash ~ '^[0-9a-f]{64}$'::text)),
+    CONSTRAINT chain_heads_position_check CHECK (("position" >= 0))
+);
+CREATE TABLE public.chain_verifications (
+    id uuid NOT NULL,
+    desk_id uuid NOT NULL,
+    chain text NOT NULL,
+    status text NOT NULL,
+    held_position bigint,
+    held_hash text,
+    total bigint NOT NULL,
+    checked bigint NOT NULL,
+    anchors bigint NOT NULL,
+    break_kind text,
+    break_position bigint,
+    started_by_id uuid NOT NULL,
+    started_at timestamp(3) with time zone NOT NULL,
+    finished_at timestamp(3) with time zone,
+    CONSTRAINT chain_verifications_anchors_check CHECK ((anchors >= 0)),
+    CONSTRAINT chain_verifications_break_kind_check CHECK ((break_kind <> ''::text)),
+    CONSTRAINT chain_verifications_break_position_check CHECK ((break_position >= 0)),
+    CONSTRAINT chain_verifications_chain_check CHECK ((chain ~ '^(valuations|records)/[0-9a-f-]{36}$'::text)),
+    CONSTRAINT chain_verifications_check CHECK (((held_position IS NULL) = (held_hash IS NULL))),
+    CONSTRAINT chain_verifications_check1 CHECK (((break_kind IS NULL) = (break_position IS NULL))),
+    CONSTRAINT chain_verifications_check2 CHECK (((finished_at IS NOT NULL) = (status = 'finished'::text))),
+    CONSTRAINT chain_verifications_checked_check CHECK ((checked >= 0)),
+    CONSTRAINT chain_verifications_held_hash_check CHECK ((held_hash ~ '^[0-9a-f]{64}$'::text)),
+    CONSTRAINT chain_verifications_held_position_check CHECK ((held_position >= 1)),
+    CONSTRAINT chain_verifications_status_check CHECK ((status = ANY (ARRAY['queued'::text, 'running'::text, 'finished'::text]))),
+    CONSTRAINT chain_verifications_total_check CHECK ((total >= 0))
+);
 CREATE TABLE public.desks (
     id uuid NOT NULL,
     name text NOT NULL,
@@ -11,6 +180,35 @@ CREATE TABLE public.desks (
     CONSTRAINT desks_last_quote_number_check CHECK ((last_quote_number >= 0)),
     CONSTRAINT desks_name_check CHECK ((name <> ''::text)),
     CONSTRAINT desks_time_zone_check CHECK ((time_zone <> ''::text))
+);
+CREATE TABLE public.exports (
+    id uuid NOT NULL,
+    desk_id uuid NOT NULL,
+    format text NOT NULL,
+    filter jsonb NOT NULL,
+    up_to_position bigint NOT NULL,
+    status text NOT NULL,
+    total integer NOT NULL,
+    done integer NOT NULL,
+    content bytea,
+    sha256 text,
+    manifest jsonb,
+    created_by_id uuid NOT NULL,
+    created_at timestamp(3) with time zone NOT NULL,
+    ready_at timestamp(3) with time zone,
+    CONSTRAINT exports_check CHECK (((content IS NOT NULL) = (status = 'ready'::text))),
+    CONSTRAINT exports_check1 CHECK (((content IS NULL) = (sha256 IS NULL))),
+    CONSTRAINT exports_check2 CHECK (((content IS NULL) = (manifest IS NULL))),
+    CONSTRAINT exports_check3 CHECK (((content IS NULL) = (ready_at IS NULL))),
+    CONSTRAINT exports_content_check CHECK ((octet_length(content) <= 33554432)),
+    CONSTRAINT exports_done_check CHECK ((done >= 0)),
+    CONSTRAINT exports_filter_check CHECK ((jsonb_typeof(filter) = 'object'::text)),
+    CONSTRAINT exports_format_check CHECK ((format = ANY (ARRAY['csv'::text, 'xlsx'::text]))),
+    CONSTRAINT exports_manifest_check CHECK ((jsonb_typeof(manifest) = 'object'::text)),
+    CONSTRAINT exports_sha256_check CHECK ((sha256 ~ '^[0-9a-f]{64}$'::text)),
+    CONSTRAINT exports_status_check CHECK ((status = ANY (ARRAY['queued'::text, 'running'::text, 'ready'::text]))),
+    CONSTRAINT exports_total_check CHECK ((total >= 0)),
+    CONSTRAINT exports_up_to_position_check CHECK ((up_to_position >= 0))
 );
 CREATE TABLE public.grants (
     id uuid NOT NULL,
@@ -194,10 +392,20 @@ CREATE TABLE public.users (
     CONSTRAINT users_name_check CHECK ((name <> ''::text)),
     CONSTRAINT users_password_hash_check CHECK ((password_hash <> ''::text))
 );
+ALTER TABLE ONLY public.chain_anchors
+    ADD CONSTRAINT chain_anchors_pkey PRIMARY KEY (id);
+ALTER TABLE ONLY public.chain_entries
+    ADD CONSTRAINT chain_entries_pkey PRIMARY KEY (chain, "position");
+ALTER TABLE ONLY public.chain_heads
+    ADD CONSTRAINT chain_heads_pkey PRIMARY KEY (chain);
+ALTER TABLE ONLY public.chain_verifications
+    ADD CONSTRAINT chain_verifications_pkey PRIMARY KEY (id);
 ALTER TABLE ONLY public.desks
     ADD CONSTRAINT desks_name_key UNIQUE (name);
 ALTER TABLE ONLY public.desks
     ADD CONSTRAINT desks_pkey PRIMARY KEY (id);
+ALTER TABLE ONLY public.exports
+    ADD CONSTRAINT exports_pkey PRIMARY KEY (id);
 ALTER TABLE ONLY public.grants
     ADD CONSTRAINT grants_desk_id_id_key UNIQUE (desk_id, id);
 ALTER TABLE ONLY public.grants
@@ -234,6 +442,18 @@ ALTER TABLE ONLY public.users
     ADD CONSTRAINT users_email_key UNIQUE (email);
 ALTER TABLE ONLY public.users
     ADD CONSTRAINT users_pkey PRIMARY KEY (id);
+CREATE INDEX chain_anchors_chain ON public.chain_anchors USING btree (chain, "position", id);
+CREATE INDEX chain_entries_book ON public.chain_entries USING btree (chain, book_id, valued_at, "position") WHERE (role = 'primary'::text);
+CREATE INDEX chain_entries_run ON public.chain_entries USING btree (chain, run_number, valued_at, "position") WHERE (role = 'primary'::text);
+CREATE INDEX chain_entries_subject ON public.chain_entries USING btree (chain, subject_id, "position") WHERE (kind <> 'valuation'::text);
+CREATE INDEX chain_entries_trade ON public.chain_entries USING btree (chain, trade_number, valued_at, "position") WHERE (role = 'primary'::text);
+CREATE INDEX chain_entries_underlying ON public.chain_entries USING btree (chain, underlying_id, valued_at, "position") WHERE (role = 'primary'::text);
+CREATE UNIQUE INDEX chain_entries_valuation ON public.chain_entries USING btree (run_id, trade_version_id, route) WHERE (kind = 'valuation'::text);
+CREATE INDEX chain_entries_valued ON public.chain_entries USING btree (chain, valued_at, "position") WHERE (role = 'primary'::text);
+CREATE INDEX chain_entries_verdict ON public.chain_entries USING btree (chain, verdict, valued_at, "position") WHERE (role = 'primary'::text);
+CREATE INDEX chain_heads_desk_id ON public.chain_heads USING btree (desk_id);
+CREATE INDEX chain_verifications_desk_id ON public.chain_verifications USING btree (desk_id, started_at DESC, id DESC);
+CREATE INDEX exports_desk_id ON public.exports USING btree (desk_id, created_at DESC, id DESC);
 CREATE INDEX grants_desk_id_made_at ON public.grants USING btree (desk_id, made_at DESC, id DESC);
 CREATE INDEX grants_desk_id_subject_id ON public.grants USING btree (desk_id, subject_id, made_at DESC, id DESC);
 CREATE INDEX idempotency_keys_created_at ON public.idempotency_keys USING btree (created_at);
@@ -242,6 +462,35 @@ CREATE INDEX memberships_user_id ON public.memberships USING btree (user_id);
 CREATE INDEX quotes_desk_id_created_at ON public.quotes USING btree (desk_id, created_at DESC, id DESC);
 CREATE INDEX sessions_expires_at ON public.sessions USING btree (expires_at);
 CREATE INDEX sessions_user_id ON public.sessions USING btree (user_id);
+CREATE TRIGGER refuse_row BEFORE DELETE OR UPDATE ON public.chain_anchors FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
+ALTER TABLE public.chain_anchors ENABLE ALWAYS TRIGGER refuse_row;
+CREATE TRIGGER refuse_row BEFORE DELETE OR UPDATE ON public.chain_entries FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
+ALTER TABLE public.chain_entries ENABLE ALWAYS TRIGGER refuse_row;
+CREATE TRIGGER refuse_row BEFORE DELETE ON public.chain_heads FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
+ALTER TABLE public.chain_heads ENABLE ALWAYS TRIGGER refuse_row;
+CREATE TRIGGER refuse_step_back BEFORE UPDATE ON public.chain_heads FOR EACH ROW EXECUTE FUNCTION public.refuse_step_back();
+ALTER TABLE public.chain_heads ENABLE ALWAYS TRIGGER refuse_step_back;
+CREATE TRIGGER refuse_truncate BEFORE TRUNCATE ON public.chain_anchors FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
+ALTER TABLE public.chain_anchors ENABLE ALWAYS TRIGGER refuse_truncate;
+CREATE TRIGGER refuse_truncate BEFORE TRUNCATE ON public.chain_entries FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
+ALTER TABLE public.chain_entries ENABLE ALWAYS TRIGGER refuse_truncate;
+CREATE TRIGGER refuse_truncate BEFORE TRUNCATE ON public.chain_heads FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
+ALTER TABLE public.chain_heads ENABLE ALWAYS TRIGGER refuse_truncate;
+CREATE TRIGGER start_chains AFTER INSERT ON public.desks FOR EACH ROW EXECUTE FUNCTION public.start_chains();
+ALTER TABLE ONLY public.chain_anchors
+    ADD CONSTRAINT chain_anchors_chain_fkey FOREIGN KEY (chain) REFERENCES public.chain_heads(chain);
+ALTER TABLE ONLY public.chain_entries
+    ADD CONSTRAINT chain_entries_chain_fkey FOREIGN KEY (chain) REFERENCES public.chain_heads(chain);
+ALTER TABLE ONLY public.chain_heads
+    ADD CONSTRAINT chain_heads_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
+ALTER TABLE ONLY public.chain_verifications
+    ADD CONSTRAINT chain_verifications_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
+ALTER TABLE ONLY public.chain_verifications
+    ADD CONSTRAINT chain_verifications_started_by_id_fkey FOREIGN KEY (started_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.exports
+    ADD CONSTRAINT exports_created_by_id_fkey FOREIGN KEY (created_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.exports
+    ADD CONSTRAINT exports_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
 ALTER TABLE ONLY public.grants
     ADD CONSTRAINT grants_desk_id_ended_grant_id_fkey FOREIGN KEY (desk_id, ended_grant_id) REFERENCES public.grants(desk_id, id);
 ALTER TABLE ONLY public.grants
@@ -281,8 +530,34 @@ ALTER TABLE ONLY public.underlyings
 REVOKE USAGE ON SCHEMA public FROM PUBLIC;
 GRANT ALL ON SCHEMA public TO owner;
 GRANT USAGE ON SCHEMA public TO app;
+REVOKE ALL ON FUNCTION public.append(chain_name text, bodies text[]) FROM PUBLIC;
+GRANT ALL ON FUNCTION public.append(chain_name text, bodies text[]) TO app;
+REVOKE ALL ON FUNCTION public.chain_hash(previous text, chain text, pos bigint, at text, body text) FROM PUBLIC;
+REVOKE ALL ON FUNCTION public.lock_chain(chain_name text) FROM PUBLIC;
+GRANT ALL ON FUNCTION public.lock_chain(chain_name text) TO app;
+REVOKE ALL ON FUNCTION public.refuse_change() FROM PUBLIC;
+REVOKE ALL ON FUNCTION public.refuse_step_back() FROM PUBLIC;
+REVOKE ALL ON FUNCTION public.start_chains() FROM PUBLIC;
+GRANT SELECT,INSERT ON TABLE public.chain_anchors TO app;
+GRANT SELECT ON TABLE public.chain_entries TO app;
+GRANT SELECT ON TABLE public.chain_heads TO app;
+GRANT SELECT,INSERT ON TABLE public.chain_verifications TO app;
+GRANT UPDATE(status) ON TABLE public.chain_verifications TO app;
+GRANT UPDATE(total) ON TABLE public.chain_verifications TO app;
+GRANT UPDATE(checked) ON TABLE public.chain_verifications TO app;
+GRANT UPDATE(anchors) ON TABLE public.chain_verifications TO app;
+GRANT UPDATE(break_kind) ON TABLE public.chain_verifications TO app;
+GRANT UPDATE(break_position) ON TABLE public.chain_verifications TO app;
+GRANT UPDATE(finished_at) ON TABLE public.chain_verifications TO app;
 GRANT SELECT,INSERT ON TABLE public.desks TO app;
 GRANT UPDATE(last_quote_number) ON TABLE public.desks TO app;
+GRANT SELECT,INSERT ON TABLE public.exports TO app;
+GRANT UPDATE(status) ON TABLE public.exports TO app;
+GRANT UPDATE(done) ON TABLE public.exports TO app;
+GRANT UPDATE(content) ON TABLE public.exports TO app;
+GRANT UPDATE(sha256) ON TABLE public.exports TO app;
+GRANT UPDATE(manifest) ON TABLE public.exports TO app;
+GRANT UPDATE(ready_at) ON TABLE public.exports TO app;
 GRANT SELECT,INSERT ON TABLE public.grants TO app;
 GRANT SELECT,INSERT,DELETE ON TABLE public.idempotency_keys TO app;
 GRANT SELECT,INSERT ON TABLE public.market_quotes TO app;

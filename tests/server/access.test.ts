@@ -12,6 +12,7 @@ import type { Underlying } from '@/server/models/underlying';
 import { endpoints, type EndpointName } from '@/shared/contracts';
 import type { Endpoint } from '@/shared/endpoint';
 import { deskRoles, permissions, roleHas, type Permission } from '@/shared/permissions';
+import { makeExport, makeVerification } from '../factories/chains';
 import { makeApprovedClose, makeUnderlying } from '../factories/market';
 import {
   makeDesk,
@@ -24,6 +25,7 @@ import {
   type TestMember,
 } from '../factories/people';
 import { makeQuote, quoteDraft } from '../factories/quotes';
+import { storeValuations, valuationPair } from '../factories/valuations';
 
 withServer();
 
@@ -84,6 +86,14 @@ async function paramsFor(endpoint: Endpoint): Promise<Record<string, string>> {
   }
   if (endpoint.path.includes(':quoteId'))
     params.quoteId = (await makeQuote(desk, underlying, members.analyst.user)).id;
+  if (endpoint.path.includes(':position')) {
+    const [{ position }] = await storeValuations(desk, [...valuationPair(underlying)]);
+    params.position = String(position);
+  }
+  if (endpoint.path.includes(':verificationId'))
+    params.verificationId = (await makeVerification(desk, members.auditor.user)).id;
+  if (endpoint.path.includes(':exportId'))
+    params.exportId = (await makeExport(desk, members.auditor.user)).id;
   return params;
 }
 

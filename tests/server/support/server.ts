@@ -5,6 +5,7 @@ import { createServer, type Server } from 'node:http';
 import request, { type Test } from 'supertest';
 import { sequelize } from '@/server/database';
 import { migrate } from '@/server/migrate';
+import { closeExportThreads } from '@/server/services/export-file';
 import { closePasswordThreads } from '@/server/services/passwords';
 import { closePricingThreads } from '@/server/services/pricing';
 import { close, createApp } from '@/server/web';
@@ -22,7 +23,7 @@ export function withOwnDatabase() {
     await migrate(testEnvironment.DATABASE_OWNER_URL, testEnvironment.DATABASE_URL);
   });
   afterAll(async () => {
-    await Promise.all([closePasswordThreads(), closePricingThreads()]);
+    await Promise.all([closePasswordThreads(), closePricingThreads(), closeExportThreads()]);
     await sequelize.close();
     await dropDatabase();
     removeFolder();
