@@ -7,6 +7,7 @@ test('a process below a process is found, and its end is seen', async () => {
   const shell = spawn('sh', ['-c', 'sleep 600 & echo $!; wait'], {
     stdio: ['ignore', 'pipe', 'inherit'],
   });
+  const shellEnded = once(shell, 'exit');
   const [said] = await once(shell.stdout, 'data');
   const sleeper = Number(String(said));
   expect(descendants(process.pid)).toEqual(expect.arrayContaining([shell.pid, sleeper]));
@@ -14,7 +15,7 @@ test('a process below a process is found, and its end is seen', async () => {
   expect(await waitForEnd(sleeper, 0)).toBe(false);
   signal(sleeper, 'SIGKILL');
   expect(await waitForEnd(sleeper, 5000)).toBe(true);
-  await once(shell, 'exit');
+  await shellEnded;
   expect(commandLine(sleeper)).toEqual([]);
   signal(sleeper, 'SIGKILL');
 });
