@@ -11,6 +11,8 @@ const stopTimeoutMs = 6000;
 /** What the server process reads; `server/env.ts` checks it. */
 function serviceEnvironment({ database, keysFolder, port }) {
   return {
+    // The launcher says each step in plain words; a line per request would bury them.
+    LOG_LEVEL: 'warn',
     ...process.env,
     DATABASE_URL: database.appUrl,
     DATABASE_OWNER_URL: database.ownerUrl,
