@@ -86,4 +86,11 @@ function makeKeysFolder(folder) {
   return keys;
 }
 
-module.exports = { makeKeysFolder, openDatabase, takeHome, writeRunning };
+/** Where the product of this checkout answers; null while it does not. */
+async function runningAddress() {
+  const running = readRunning(stateFolder());
+  const answers = running !== null && isReady(await readHealth(running.port));
+  return answers ? `http://${host}:${running.port}` : null;
+}
+
+module.exports = { runningAddress, makeKeysFolder, openDatabase, takeHome, writeRunning };
