@@ -5,6 +5,7 @@ import {
   removeFolder,
   testEnvironment,
 } from './support/environment';
+import { until } from './support/until';
 import { fork, type ChildProcess } from 'node:child_process';
 import { createServer } from 'node:net';
 import path from 'node:path';
@@ -53,7 +54,7 @@ async function isReady(port: number): Promise<boolean> {
 async function startReady(): Promise<ChildProcess> {
   const port = await freePort();
   const child = start(port);
-  while (child.exitCode === null && !(await isReady(port)));
+  await until(async () => child.exitCode !== null || isReady(port));
   return child;
 }
 

@@ -6,6 +6,7 @@ import {
   removeFolder,
   testEnvironment,
 } from './support/environment';
+import { until } from './support/until';
 import { spawn, type ChildProcess } from 'node:child_process';
 import path from 'node:path';
 import signIns from '@/server/seed/sign-ins.json';
@@ -49,7 +50,7 @@ test('a run that is killed half-way is taken back and begun anew', async () => {
     );
     return present && (await count('underlyings')) > 0;
   };
-  while (!(await isUnderWay()));
+  await until(isUnderWay);
   killed.kill('SIGKILL');
   await ended(killed);
   expect(await count('users')).toBeGreaterThan(0);

@@ -1,6 +1,7 @@
 /** What every answer has in common: headers, problems, pages, and health. */
 import { indexHtml } from './support/environment';
 import { call, running, withServer } from './support/server';
+import { until } from './support/until';
 import request from 'supertest';
 import { startWorker, type Worker } from '@/server/worker';
 import { getHealth } from '@/shared/contracts/health';
@@ -10,11 +11,6 @@ import { problemSchema } from '@/shared/errors';
 withServer();
 
 const get = (path: string) => request(running()).get(path);
-
-/** A condition that becomes true by itself; the test's own time limit ends the wait. */
-async function waitFor(isTrue: () => Promise<boolean>) {
-  while (!(await isTrue()));
-}
 
 describe('health', () => {
   let worker: Worker | null = null;
@@ -30,11 +26,11 @@ describe('health', () => {
       version: expect.stringMatching(/^\d+\.\d+\.\d+$/),
     });
     worker = await startWorker();
-    await waitFor(async () => (await call(getHealth)).status === 200);
+    await until(async () => (await call(getHealth)).status === 200);
     expect((await call(getHealth)).body).toMatchObject({ status: 'ready' });
     await worker.stop();
     worker = null;
-    await waitFor(async () => (await call(getHealth)).status === 503);
+    await until(async () => (await call(getHealth)).status === 503);
   });
 });
 
