@@ -1,11 +1,13 @@
 /** Rules over all endpoints and schemas, whichever there are. */
-import './support/environment';
+import { removeFolder } from './support/environment';
 import { z } from 'zod';
 import { routes } from '@/server/routes';
 import { endpoints } from '@/shared/contracts';
 import type { Endpoint } from '@/shared/endpoint';
 import { errorCodes, errorRow } from '@/shared/errors';
 import { openApiDocument } from '@/shared/openapi';
+
+afterAll(removeFolder);
 
 type Node = Record<string, unknown>;
 

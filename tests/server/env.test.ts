@@ -1,8 +1,10 @@
-import { testEnvironment } from './support/environment';
+import { removeFolder, testEnvironment } from './support/environment';
 import { spawnSync } from 'node:child_process';
 import { readFileSync } from 'node:fs';
 import path from 'node:path';
 import { envKeys, parseEnv } from '@/server/env';
+
+afterAll(removeFolder);
 
 const root = path.join(__dirname, '..', '..');
 

@@ -1,9 +1,11 @@
-import './support/environment';
+import { removeFolder } from './support/environment';
 import { spawn } from 'node:child_process';
 import { mkdtempSync, readdirSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 import { keyNamed } from '@/server/keys';
+
+afterAll(removeFolder);
 
 const folder = mkdtempSync(path.join(os.tmpdir(), 'driftless-keys-'));
 afterAll(() => rmSync(folder, { recursive: true }));
