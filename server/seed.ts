@@ -9,6 +9,7 @@ import { log } from './log';
 import type { Desk } from './models/desk';
 import { actorOn, personNamed, seedChanges, seedPeople, type People } from './seed/people';
 import { seedQuotes, type Listed } from './seed/quotes';
+import { commodityBooks, seedTrades, treasuryBooks } from './seed/trades';
 import { commodities, treasury, type SeedUnderlying } from './seed/underlyings';
 import { writeDemonstration } from './seed/unfinished';
 import { today } from './services/access';
@@ -74,6 +75,20 @@ async function write() {
   await fillDesk(grain, people, commodities, { makers: grainMakers, checker }, 4);
   const moneyMakers = ['treasury-analyst', 'treasury-desk-head'];
   await fillDesk(money, people, treasury, { makers: moneyMakers, checker }, 3);
+  const actorsOn = (desk: Desk, accounts: readonly string[]) =>
+    Promise.all(accounts.map((account) => actorOn(desk, personNamed(people, account))));
+  await seedTrades({
+    books: commodityBooks,
+    proposers: await actorsOn(grain, ['analyst', 'second-analyst']),
+    approvers: await actorsOn(grain, ['desk-head', 'second-desk-head']),
+    count: 140,
+  });
+  await seedTrades({
+    books: treasuryBooks,
+    proposers: await actorsOn(money, ['treasury-analyst']),
+    approvers: await actorsOn(money, ['treasury-desk-head']),
+    count: 60,
+  });
   await seedChanges(grain, people);
 }
 

@@ -3,8 +3,17 @@ import { people } from './0002-people';
 import { market } from './0003-market';
 import { quotes } from './0004-quotes';
 import { chain } from './0010-chain';
+import { trades } from './0011-trades';
 import { exportFiles } from './0015-exports';
 import type { Migration } from './migration';
 
 /** Every migration, oldest first. Listed by hand, so that the bundled server carries them. */
-export const migrations: readonly Migration[] = [roles, people, market, quotes, chain, exportFiles];
+export const migrations: readonly Migration[] = [
+  roles,
+  people,
+  market,
+  quotes,
+  chain,
+  trades,
+  exportFiles,
+];

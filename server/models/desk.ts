@@ -16,6 +16,8 @@ export class Desk extends Model<InferAttributes<Desk>, InferCreationAttributes<D
   declare expiryCutoff: string;
   /** Counted on under the row's lock, so that quotes are numbered without gaps. */
   declare lastQuoteNumber: CreationOptional<number>;
+  /** Counts the desk's trades in the same way. */
+  declare lastTradeNumber: CreationOptional<number>;
   declare createdAt: CreationOptional<Date>;
 }
 
@@ -26,6 +28,7 @@ Desk.init(
     timeZone: { type: DataTypes.TEXT, allowNull: false },
     expiryCutoff: { type: DataTypes.TEXT, allowNull: false },
     lastQuoteNumber: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 0 },
+    lastTradeNumber: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 0 },
     createdAt: { type: DataTypes.DATE(3), allowNull: false, defaultValue: DataTypes.NOW },
   },
   { sequelize, tableName: 'desks' },

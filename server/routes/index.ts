@@ -5,11 +5,13 @@ import { unknownPath, wrongMethod } from '../middleware/problem';
 import type { Route } from '../middleware/route';
 import { chainRoutes } from './chains';
 import { exportRoutes } from './exports';
+import { bookRoutes } from './books';
 import { healthRoutes } from './health';
 import { historyRoutes } from './history';
 import { peopleRoutes } from './people';
 import { quoteRoutes } from './quotes';
 import { sessionRoutes } from './sessions';
+import { tradeRoutes } from './trades';
 import { underlyingRoutes } from './underlyings';
 
 export const routes: readonly Route[] = [
@@ -18,6 +20,8 @@ export const routes: readonly Route[] = [
   ...peopleRoutes,
   ...underlyingRoutes,
   ...quoteRoutes,
+  ...bookRoutes,
+  ...tradeRoutes,
   ...chainRoutes,
   ...historyRoutes,
   ...exportRoutes,

@@ -1,4 +1,5 @@
 /** Every endpoint there is, by name: routes, OpenAPI and the role test are driven by this list. */
+import * as books from './books';
 import * as chain from './chain';
 import * as historyExports from './exports';
 import * as health from './health';
@@ -6,6 +7,8 @@ import * as history from './history';
 import * as people from './people';
 import * as quotes from './quotes';
 import * as sessions from './sessions';
+import * as tradeActs from './trade-acts';
+import * as trades from './trades';
 import * as underlyings from './underlyings';
 import type { Endpoint } from '../endpoint';
 
@@ -27,6 +30,16 @@ export const endpoints = {
   createQuote: quotes.createQuote,
   listQuotes: quotes.listQuotes,
   getQuote: quotes.getQuote,
+  createBook: books.createBook,
+  listBooks: books.listBooks,
+  listTrades: trades.listTrades,
+  getTrade: trades.getTrade,
+  proposeTrade: tradeActs.proposeTrade,
+  amendTrade: tradeActs.amendTrade,
+  approveTrade: tradeActs.approveTrade,
+  returnTrade: tradeActs.returnTrade,
+  closeTrade: tradeActs.closeTrade,
+  recordExpiry: tradeActs.recordExpiry,
   getChains: chain.getChains,
   startVerification: chain.startVerification,
   getVerification: chain.getVerification,

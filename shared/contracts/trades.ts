@@ -52,11 +52,13 @@ export const tradedTermsSchema = z.strictObject({
 });
 export type TradedTerms = z.infer<typeof tradedTermsSchema>;
 
-const bookNameSchema = z.object({
-  id: idSchema,
-  code: z.string().describe('Short name of the book'),
-  name: z.string().describe('Full name of the book'),
-});
+const bookNameSchema = z
+  .object({
+    id: idSchema,
+    code: z.string().describe('Short name of the book'),
+    name: z.string().describe('Full name of the book'),
+  })
+  .describe('Book that the trade is on');
 
 /** What the last run found, and how far that is from the run on the close before. */
 export const lastValuationSchema = z.object({

@@ -89,6 +89,17 @@ CREATE FUNCTION public.start_chains() RETURNS trigger
       FROM unnest(ARRAY['valuations', 'records']) AS kinds (kind);
     RETURN NULL;
   END $$;
+CREATE TABLE public.books (
+    id uuid NOT NULL,
+    desk_id uuid NOT NULL,
+    code text NOT NULL,
+    name text NOT NULL,
+    created_by_id uuid NOT NULL,
+    created_at timestamp(3) with time zone NOT NULL,
+    archived_at timestamp(3) with time zone,
+    CONSTRAINT books_code_check CHECK ((code ~ '^[A-Z0-9][A-Z0-9-]{1,11}$'::text)),
+    CONSTRAINT books_name_check CHECK ((name <> ''::text))
+);
 CREATE TABLE public.chain_anchors (
     id uuid NOT NULL,
     chain text NOT NULL,
@@ -176,8 +187,10 @@ CREATE TABLE public.desks (
     expiry_cutoff text NOT NULL,
     last_quote_number integer DEFAULT 0 NOT NULL,
     created_at timestamp(3) with time zone NOT NULL,
+    last_trade_number integer DEFAULT 0 NOT NULL,
     CONSTRAINT desks_expiry_cutoff_check CHECK ((expiry_cutoff ~ '^([01][0-9]|2[0-3]):[0-5][0-9]$'::text)),
     CONSTRAINT desks_last_quote_number_check CHECK ((last_quote_number >= 0)),
+    CONSTRAINT desks_last_trade_number_check CHECK ((last_trade_number >= 0)),
     CONSTRAINT desks_name_check CHECK ((name <> ''::text)),
     CONSTRAINT desks_time_zone_check CHECK ((time_zone <> ''::text))
 );
@@ -361,6 +374,114 @@ CREATE TABLE public.sessions (
     CONSTRAINT sessions_end_cause_check CHECK ((end_cause = ANY (ARRAY['signed-out'::text, 'token-reused'::text]))),
     CONSTRAINT sessions_refresh_hash_check CHECK ((refresh_hash ~ '^[0-9a-f]{64}$'::text))
 );
+CREATE TABLE public.trade_versions (
+    id uuid NOT NULL,
+    desk_id uuid NOT NULL,
+    trade_id uuid NOT NULL,
+    number integer NOT NULL,
+    state text NOT NULL,
+    underlying_id uuid NOT NULL,
+    direction text NOT NULL,
+    quantity numeric NOT NULL,
+    contract_size numeric NOT NULL,
+    kind text NOT NULL,
+    exercise text NOT NULL,
+    strike numeric NOT NULL,
+    expiry_date date NOT NULL,
+    expiry_at timestamp(3) with time zone NOT NULL,
+    premium_amount numeric NOT NULL,
+    premium_currency text NOT NULL,
+    premium_date date NOT NULL,
+    counterparty text NOT NULL,
+    traded_at timestamp(3) with time zone NOT NULL,
+    note text NOT NULL,
+    quote_id uuid,
+    amendment_reason text,
+    proposed_by_id uuid NOT NULL,
+    proposed_at timestamp(3) with time zone NOT NULL,
+    decided_by_id uuid,
+    decided_at timestamp(3) with time zone,
+    decision_reason text,
+    CONSTRAINT trade_versions_amendment_reason_check CHECK ((amendment_reason <> ''::text)),
+    CONSTRAINT trade_versions_check CHECK ((traded_at < expiry_at)),
+    CONSTRAINT trade_versions_check1 CHECK (((amendment_reason IS NULL) = (number = 1))),
+    CONSTRAINT trade_versions_check2 CHECK ((decided_by_id <> proposed_by_id)),
+    CONSTRAINT trade_versions_check3 CHECK (((decided_by_id IS NULL) = (decided_at IS NULL))),
+    CONSTRAINT trade_versions_check4 CHECK (((decided_by_id IS NOT NULL) OR (state = ANY (ARRAY['proposed'::text, 'superseded'::text])))),
+    CONSTRAINT trade_versions_check5 CHECK (((decided_by_id IS NULL) OR (state <> 'proposed'::text))),
+    CONSTRAINT trade_versions_check6 CHECK (((state <> 'returned'::text) OR (decision_reason IS NOT NULL))),
+    CONSTRAINT trade_versions_contract_size_check CHECK ((contract_size > (0)::numeric)),
+    CONSTRAINT trade_versions_counterparty_check CHECK ((counterparty <> ''::text)),
+    CONSTRAINT trade_versions_decision_reason_check CHECK ((decision_reason <> ''::text)),
+    CONSTRAINT trade_versions_direction_check CHECK ((direction = ANY (ARRAY['buy'::text, 'sell'::text]))),
+    CONSTRAINT trade_versions_exercise_check CHECK ((exercise = ANY (ARRAY['european'::text, 'american'::text]))),
+    CONSTRAINT trade_versions_kind_check CHECK ((kind = ANY (ARRAY['call'::text, 'put'::text]))),
+    CONSTRAINT trade_versions_number_check CHECK ((number >= 1)),
+    CONSTRAINT trade_versions_premium_amount_check CHECK ((premium_amount >= (0)::numeric)),
+    CONSTRAINT trade_versions_premium_currency_check CHECK ((premium_currency ~ '^[A-Z]{3}$'::text)),
+    CONSTRAINT trade_versions_quantity_check CHECK ((quantity > (0)::numeric)),
+    CONSTRAINT trade_versions_state_check CHECK ((state = ANY (ARRAY['proposed'::text, 'approved'::text, 'returned'::text, 'superseded'::text]))),
+    CONSTRAINT trade_versions_strike_check CHECK ((strike > (0)::numeric))
+);
+CREATE TABLE public.trades (
+    id uuid NOT NULL,
+    desk_id uuid NOT NULL,
+    book_id uuid NOT NULL,
+    ordinal integer NOT NULL,
+    number text GENERATED ALWAYS AS (('T-'::text || lpad((ordinal)::text, GREATEST(4, length((ordinal)::text)), '0'::text))) STORED NOT NULL,
+    status text NOT NULL,
+    live_version_id uuid,
+    latest_version_id uuid NOT NULL,
+    version integer DEFAULT 0 NOT NULL,
+    underlying_id uuid NOT NULL,
+    expiry_at timestamp(3) with time zone NOT NULL,
+    proposed_by_id uuid NOT NULL,
+    proposed_at timestamp(3) with time zone NOT NULL,
+    end_outcome text,
+    end_date date,
+    end_amount numeric,
+    end_currency text,
+    last_run_id uuid,
+    last_snapshot_date date,
+    last_value double precision,
+    last_error double precision,
+    last_verdict text,
+    last_refuted boolean,
+    last_total numeric,
+    last_strip jsonb,
+    last_tolerance double precision,
+    previous_value double precision,
+    value_change double precision GENERATED ALWAYS AS ((last_value - previous_value)) STORED,
+    CONSTRAINT trades_check CHECK (((live_version_id IS NULL) = (status = ANY (ARRAY['proposed'::text, 'returned'::text])))),
+    CONSTRAINT trades_check1 CHECK (((live_version_id <> latest_version_id) OR (status <> 'amended'::text))),
+    CONSTRAINT trades_check10 CHECK (((last_value IS NULL) = (last_strip IS NULL))),
+    CONSTRAINT trades_check11 CHECK (((last_value IS NULL) = (last_tolerance IS NULL))),
+    CONSTRAINT trades_check12 CHECK (((last_error IS NULL) OR (last_value IS NOT NULL))),
+    CONSTRAINT trades_check2 CHECK (((end_outcome IS NULL) = (end_date IS NULL))),
+    CONSTRAINT trades_check3 CHECK (((end_amount IS NULL) = (end_currency IS NULL))),
+    CONSTRAINT trades_check4 CHECK (
+CASE status
+    WHEN 'closed'::text THEN ((end_outcome = 'closed'::text) AND (end_amount IS NOT NULL))
+    WHEN 'expired'::text THEN ((end_outcome = ANY (ARRAY['lapsed'::text, 'exercised'::text])) AND (end_amount IS NULL))
+    ELSE ((end_outcome IS NULL) AND (end_amount IS NULL))
+END),
+    CONSTRAINT trades_check5 CHECK (((last_run_id IS NULL) = (last_snapshot_date IS NULL))),
+    CONSTRAINT trades_check6 CHECK (((last_run_id IS NOT NULL) OR (last_value IS NULL))),
+    CONSTRAINT trades_check7 CHECK (((last_value IS NULL) = (last_total IS NULL))),
+    CONSTRAINT trades_check8 CHECK (((last_value IS NULL) = (last_verdict IS NULL))),
+    CONSTRAINT trades_check9 CHECK (((last_value IS NULL) = (last_refuted IS NULL))),
+    CONSTRAINT trades_end_currency_check CHECK ((end_currency ~ '^[A-Z]{3}$'::text)),
+    CONSTRAINT trades_end_outcome_check CHECK ((end_outcome = ANY (ARRAY['closed'::text, 'lapsed'::text, 'exercised'::text]))),
+    CONSTRAINT trades_last_error_check CHECK (((last_error >= (0)::double precision) AND (last_error < 'Infinity'::double precision))),
+    CONSTRAINT trades_last_strip_check CHECK ((jsonb_typeof(last_strip) = 'array'::text)),
+    CONSTRAINT trades_last_tolerance_check CHECK ((last_tolerance > (0)::double precision)),
+    CONSTRAINT trades_last_value_check CHECK ((abs(last_value) < 'Infinity'::double precision)),
+    CONSTRAINT trades_last_verdict_check CHECK ((last_verdict = ANY (ARRAY['agree'::text, 'wide'::text, 'disagree'::text, 'one-route'::text]))),
+    CONSTRAINT trades_ordinal_check CHECK ((ordinal >= 1)),
+    CONSTRAINT trades_previous_value_check CHECK ((abs(previous_value) < 'Infinity'::double precision)),
+    CONSTRAINT trades_status_check CHECK ((status = ANY (ARRAY['proposed'::text, 'returned'::text, 'live'::text, 'amended'::text, 'closed'::text, 'expired'::text]))),
+    CONSTRAINT trades_version_check CHECK ((version >= 0))
+);
 CREATE TABLE public.underlyings (
     id uuid NOT NULL,
     desk_id uuid NOT NULL,
@@ -392,6 +513,12 @@ CREATE TABLE public.users (
     CONSTRAINT users_name_check CHECK ((name <> ''::text)),
     CONSTRAINT users_password_hash_check CHECK ((password_hash <> ''::text))
 );
+ALTER TABLE ONLY public.books
+    ADD CONSTRAINT books_desk_id_code_key UNIQUE (desk_id, code);
+ALTER TABLE ONLY public.books
+    ADD CONSTRAINT books_desk_id_id_key UNIQUE (desk_id, id);
+ALTER TABLE ONLY public.books
+    ADD CONSTRAINT books_pkey PRIMARY KEY (id);
 ALTER TABLE ONLY public.chain_anchors
     ADD CONSTRAINT chain_anchors_pkey PRIMARY KEY (id);
 ALTER TABLE ONLY public.chain_entries
@@ -432,6 +559,18 @@ ALTER TABLE ONLY public.schema_migrations
     ADD CONSTRAINT schema_migrations_pkey PRIMARY KEY (name);
 ALTER TABLE ONLY public.sessions
     ADD CONSTRAINT sessions_pkey PRIMARY KEY (id);
+ALTER TABLE ONLY public.trade_versions
+    ADD CONSTRAINT trade_versions_pkey PRIMARY KEY (id);
+ALTER TABLE ONLY public.trade_versions
+    ADD CONSTRAINT trade_versions_trade_id_id_key UNIQUE (trade_id, id);
+ALTER TABLE ONLY public.trade_versions
+    ADD CONSTRAINT trade_versions_trade_id_number_key UNIQUE (trade_id, number);
+ALTER TABLE ONLY public.trades
+    ADD CONSTRAINT trades_desk_id_id_key UNIQUE (desk_id, id);
+ALTER TABLE ONLY public.trades
+    ADD CONSTRAINT trades_desk_id_ordinal_key UNIQUE (desk_id, ordinal);
+ALTER TABLE ONLY public.trades
+    ADD CONSTRAINT trades_pkey PRIMARY KEY (id);
 ALTER TABLE ONLY public.underlyings
     ADD CONSTRAINT underlyings_desk_id_id_key UNIQUE (desk_id, id);
 ALTER TABLE ONLY public.underlyings
@@ -462,6 +601,12 @@ CREATE INDEX memberships_user_id ON public.memberships USING btree (user_id);
 CREATE INDEX quotes_desk_id_created_at ON public.quotes USING btree (desk_id, created_at DESC, id DESC);
 CREATE INDEX sessions_expires_at ON public.sessions USING btree (expires_at);
 CREATE INDEX sessions_user_id ON public.sessions USING btree (user_id);
+CREATE UNIQUE INDEX trade_versions_approved ON public.trade_versions USING btree (trade_id) WHERE (state = 'approved'::text);
+CREATE UNIQUE INDEX trade_versions_waiting ON public.trade_versions USING btree (trade_id) WHERE (state = 'proposed'::text);
+CREATE INDEX trades_book_id_expiry_at ON public.trades USING btree (book_id, expiry_at, id);
+CREATE INDEX trades_book_id_ordinal ON public.trades USING btree (book_id, ordinal, id);
+CREATE INDEX trades_desk_id_expiry_at ON public.trades USING btree (desk_id, expiry_at, id);
+CREATE INDEX trades_waiting ON public.trades USING btree (desk_id, ordinal) WHERE (status = ANY (ARRAY['proposed'::text, 'amended'::text]));
 CREATE TRIGGER refuse_row BEFORE DELETE OR UPDATE ON public.chain_anchors FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
 ALTER TABLE public.chain_anchors ENABLE ALWAYS TRIGGER refuse_row;
 CREATE TRIGGER refuse_row BEFORE DELETE OR UPDATE ON public.chain_entries FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
@@ -477,6 +622,10 @@ ALTER TABLE public.chain_entries ENABLE ALWAYS TRIGGER refuse_truncate;
 CREATE TRIGGER refuse_truncate BEFORE TRUNCATE ON public.chain_heads FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
 ALTER TABLE public.chain_heads ENABLE ALWAYS TRIGGER refuse_truncate;
 CREATE TRIGGER start_chains AFTER INSERT ON public.desks FOR EACH ROW EXECUTE FUNCTION public.start_chains();
+ALTER TABLE ONLY public.books
+    ADD CONSTRAINT books_created_by_id_fkey FOREIGN KEY (created_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.books
+    ADD CONSTRAINT books_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
 ALTER TABLE ONLY public.chain_anchors
     ADD CONSTRAINT chain_anchors_chain_fkey FOREIGN KEY (chain) REFERENCES public.chain_heads(chain);
 ALTER TABLE ONLY public.chain_entries
@@ -525,6 +674,28 @@ ALTER TABLE ONLY public.quotes
     ADD CONSTRAINT quotes_desk_id_underlying_id_fkey FOREIGN KEY (desk_id, underlying_id) REFERENCES public.underlyings(desk_id, id);
 ALTER TABLE ONLY public.sessions
     ADD CONSTRAINT sessions_user_id_fkey FOREIGN KEY (user_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.trade_versions
+    ADD CONSTRAINT trade_versions_decided_by_id_fkey FOREIGN KEY (decided_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.trade_versions
+    ADD CONSTRAINT trade_versions_desk_id_trade_id_fkey FOREIGN KEY (desk_id, trade_id) REFERENCES public.trades(desk_id, id);
+ALTER TABLE ONLY public.trade_versions
+    ADD CONSTRAINT trade_versions_desk_id_underlying_id_fkey FOREIGN KEY (desk_id, underlying_id) REFERENCES public.underlyings(desk_id, id);
+ALTER TABLE ONLY public.trade_versions
+    ADD CONSTRAINT trade_versions_proposed_by_id_fkey FOREIGN KEY (proposed_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.trade_versions
+    ADD CONSTRAINT trade_versions_quote_id_fkey FOREIGN KEY (quote_id) REFERENCES public.quotes(id);
+ALTER TABLE ONLY public.trades
+    ADD CONSTRAINT trades_desk_id_book_id_fkey FOREIGN KEY (desk_id, book_id) REFERENCES public.books(desk_id, id);
+ALTER TABLE ONLY public.trades
+    ADD CONSTRAINT trades_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
+ALTER TABLE ONLY public.trades
+    ADD CONSTRAINT trades_desk_id_underlying_id_fkey FOREIGN KEY (desk_id, underlying_id) REFERENCES public.underlyings(desk_id, id);
+ALTER TABLE ONLY public.trades
+    ADD CONSTRAINT trades_id_latest_version_id_fkey FOREIGN KEY (id, latest_version_id) REFERENCES public.trade_versions(trade_id, id) DEFERRABLE INITIALLY DEFERRED;
+ALTER TABLE ONLY public.trades
+    ADD CONSTRAINT trades_id_live_version_id_fkey FOREIGN KEY (id, live_version_id) REFERENCES public.trade_versions(trade_id, id) DEFERRABLE INITIALLY DEFERRED;
+ALTER TABLE ONLY public.trades
+    ADD CONSTRAINT trades_proposed_by_id_fkey FOREIGN KEY (proposed_by_id) REFERENCES public.users(id);
 ALTER TABLE ONLY public.underlyings
     ADD CONSTRAINT underlyings_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
 REVOKE USAGE ON SCHEMA public FROM PUBLIC;
@@ -538,6 +709,9 @@ GRANT ALL ON FUNCTION public.lock_chain(chain_name text) TO app;
 REVOKE ALL ON FUNCTION public.refuse_change() FROM PUBLIC;
 REVOKE ALL ON FUNCTION public.refuse_step_back() FROM PUBLIC;
 REVOKE ALL ON FUNCTION public.start_chains() FROM PUBLIC;
+GRANT SELECT,INSERT ON TABLE public.books TO app;
+GRANT UPDATE(name) ON TABLE public.books TO app;
+GRANT UPDATE(archived_at) ON TABLE public.books TO app;
 GRANT SELECT,INSERT ON TABLE public.chain_anchors TO app;
 GRANT SELECT ON TABLE public.chain_entries TO app;
 GRANT SELECT ON TABLE public.chain_heads TO app;
@@ -551,6 +725,7 @@ GRANT UPDATE(break_position) ON TABLE public.chain_verifications TO app;
 GRANT UPDATE(finished_at) ON TABLE public.chain_verifications TO app;
 GRANT SELECT,INSERT ON TABLE public.desks TO app;
 GRANT UPDATE(last_quote_number) ON TABLE public.desks TO app;
+GRANT UPDATE(last_trade_number) ON TABLE public.desks TO app;
 GRANT SELECT,INSERT ON TABLE public.exports TO app;
 GRANT UPDATE(status) ON TABLE public.exports TO app;
 GRANT UPDATE(done) ON TABLE public.exports TO app;
@@ -578,6 +753,31 @@ GRANT UPDATE(stepped_up_at) ON TABLE public.sessions TO app;
 GRANT UPDATE(rotated_at) ON TABLE public.sessions TO app;
 GRANT UPDATE(ended_at) ON TABLE public.sessions TO app;
 GRANT UPDATE(end_cause) ON TABLE public.sessions TO app;
+GRANT SELECT,INSERT ON TABLE public.trade_versions TO app;
+GRANT UPDATE(state) ON TABLE public.trade_versions TO app;
+GRANT UPDATE(decided_by_id) ON TABLE public.trade_versions TO app;
+GRANT UPDATE(decided_at) ON TABLE public.trade_versions TO app;
+GRANT UPDATE(decision_reason) ON TABLE public.trade_versions TO app;
+GRANT SELECT,INSERT ON TABLE public.trades TO app;
+GRANT UPDATE(status) ON TABLE public.trades TO app;
+GRANT UPDATE(live_version_id) ON TABLE public.trades TO app;
+GRANT UPDATE(latest_version_id) ON TABLE public.trades TO app;
+GRANT UPDATE(version) ON TABLE public.trades TO app;
+GRANT UPDATE(expiry_at) ON TABLE public.trades TO app;
+GRANT UPDATE(end_outcome) ON TABLE public.trades TO app;
+GRANT UPDATE(end_date) ON TABLE public.trades TO app;
+GRANT UPDATE(end_amount) ON TABLE public.trades TO app;
+GRANT UPDATE(end_currency) ON TABLE public.trades TO app;
+GRANT UPDATE(last_run_id) ON TABLE public.trades TO app;
+GRANT UPDATE(last_snapshot_date) ON TABLE public.trades TO app;
+GRANT UPDATE(last_value) ON TABLE public.trades TO app;
+GRANT UPDATE(last_error) ON TABLE public.trades TO app;
+GRANT UPDATE(last_verdict) ON TABLE public.trades TO app;
+GRANT UPDATE(last_refuted) ON TABLE public.trades TO app;
+GRANT UPDATE(last_total) ON TABLE public.trades TO app;
+GRANT UPDATE(last_strip) ON TABLE public.trades TO app;
+GRANT UPDATE(last_tolerance) ON TABLE public.trades TO app;
+GRANT UPDATE(previous_value) ON TABLE public.trades TO app;
 GRANT SELECT,INSERT ON TABLE public.underlyings TO app;
 GRANT UPDATE(symbol) ON TABLE public.underlyings TO app;
 GRANT UPDATE(name) ON TABLE public.underlyings TO app;

@@ -25,6 +25,7 @@ import {
   type TestMember,
 } from '../factories/people';
 import { makeQuote, quoteDraft } from '../factories/quotes';
+import { makeBook, makeTrade, proposal } from '../factories/trades';
 import { storeValuations, valuationPair } from '../factories/valuations';
 
 withServer();
@@ -57,10 +58,31 @@ const withUnderlying = (body: unknown) => ({
   ...quoteDraft(underlying),
 });
 
+let bookCount = 0;
+
+/** An American option of last spring, proposed and approved by people who do nothing else here. */
+async function liveTrade(): Promise<string> {
+  const approver = await makeUser();
+  return (await makeTrade(await makeBook(desk), underlying, await makeUser(), { approver })).id;
+}
+
 /** Endpoints whose record must be in a certain state, or whose example needs a record's id. */
 const special: Partial<Record<EndpointName, (prepared: Prepared) => Promise<Prepared>>> = {
   async createQuote({ params, body }) {
     return { params, body: withUnderlying(body) };
+  },
+  async createBook({ params, body }) {
+    return { params, body: { ...(body as Body), code: `B${(bookCount += 1)}` } };
+  },
+  async proposeTrade({ params }) {
+    const quote = await makeQuote(desk, underlying, members.analyst.user);
+    return { params, body: proposal(quote.id, (await makeBook(desk)).id) };
+  },
+  async closeTrade({ params, body }) {
+    return { params: { ...params, tradeId: await liveTrade() }, body };
+  },
+  async recordExpiry({ params, body }) {
+    return { params: { ...params, tradeId: await liveTrade() }, body };
   },
   async reinstateMember({ params, body }) {
     const { user } = await makeMember(desk, 'analyst', suspended());
@@ -84,6 +106,8 @@ async function paramsFor(endpoint: Endpoint): Promise<Record<string, string>> {
       params.userId = other.user.id;
     }
   }
+  if (endpoint.path.includes(':tradeId'))
+    params.tradeId = (await makeTrade(await makeBook(desk), underlying, await makeUser())).id;
   if (endpoint.path.includes(':quoteId'))
     params.quoteId = (await makeQuote(desk, underlying, members.analyst.user)).id;
   if (endpoint.path.includes(':position')) {
@@ -132,7 +156,7 @@ describe.each(deskNames)('%s', (name) => {
       const answer = await call(endpoint, { ...prepared, token });
       expect({
         status: answer.status,
-        problem: answer.body.code,
+        problem: answer.status < 400 ? undefined : answer.body.code,
         issues: answer.body.issues,
       }).toEqual({
         status: endpoint.successStatus,
