@@ -2,7 +2,7 @@
 const fs = require('node:fs');
 const os = require('node:os');
 const path = require('node:path');
-const { run, say } = require('./lifecycle');
+const { onStop, run, say } = require('./lifecycle');
 const { root } = require('./paths');
 
 const tool = (...parts) => path.join(root, 'node_modules', ...parts);
@@ -35,21 +35,21 @@ function startStages() {
 
   /** One run of Jest, counted from its own report. A file that could not run counts as failed. */
   async function runJest(args, environment) {
-    const folder = fs.mkdtempSync(path.join(os.tmpdir(), 'driftless-report-'));
+    // Whatever a test leaves in the temporary folder goes with this one.
+    const folder = fs.mkdtempSync(path.join(os.tmpdir(), 'driftless-jest-'));
+    onStop(() => fs.rmSync(folder, { recursive: true, force: true }));
     const report = path.join(folder, 'report.json');
     const jest = [tool('jest', 'bin', 'jest.js'), '--json', `--outputFile=${report}`, ...args];
-    try {
+    const code = await run(process.execPath, jest, {
+      env: { ...environment, TMPDIR: folder },
       // With --json Jest repeats the report on standard output, which nobody wants to read.
-      const options = { env: environment, stdio: ['ignore', 'ignore', 'inherit'] };
-      const code = await run(process.execPath, jest, options);
-      if (!fs.existsSync(report)) return false;
-      const counts = JSON.parse(fs.readFileSync(report, 'utf8'));
-      sum.passed += counts.numPassedTests;
-      sum.failed += counts.numFailedTests + counts.numRuntimeErrorTestSuites;
-      return code === 0;
-    } finally {
-      fs.rmSync(folder, { recursive: true, force: true });
-    }
+      stdio: ['ignore', 'ignore', 'inherit'],
+    });
+    if (!fs.existsSync(report)) return false;
+    const counts = JSON.parse(fs.readFileSync(report, 'utf8'));
+    sum.passed += counts.numPassedTests;
+    sum.failed += counts.numFailedTests + counts.numRuntimeErrorTestSuites;
+    return code === 0;
   }
 
   function end() {
