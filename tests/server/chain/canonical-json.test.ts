@@ -1,4 +1,4 @@
-/** Vectors of RFC 8785 (JSON Canonicalization Scheme): sections 3.2.2 and 3.2.3, appendix B. */
+/** Vectors of RFC 8785 (JSON Canonicalization Scheme): sections 3.2.2 and 3.2.3, appendix B; from memory. */
 import { canonicalJson } from '@/server/chain/canonical-json';
 
 function doubleOf(bits: string): number {

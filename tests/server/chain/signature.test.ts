@@ -9,7 +9,7 @@ import { signingKey } from '@/server/chain/signing-key';
 
 withOwnDatabase();
 
-/** RFC 8032, section 7.1, test 1. */
+/** RFC 8032, section 7.1, test 1; from memory. */
 const seed = '9d61b19deffd5a60ba844af492ec2cc44449c5697b326919703bac031cae7f60';
 const publicBytes = 'd75a980182b10ab7d54bfed3c964073a0ee172f3daa62325af021a68f707511a';
 const signatureOfNothing =
