@@ -10,7 +10,7 @@
 import type { methodNames, optionKinds, pricedExercises } from './names';
 
 export { checkRequest } from './check-request';
-export { numberLimits, yearFraction } from './conventions';
+export { numberLimits, sizeLimits, yearFraction } from './conventions';
 export {
   exercises,
   ladderSeries,

@@ -3,28 +3,20 @@
  * Everything is made through the services, by people who may do it; nothing happens in a database
  * that has users already.
  */
-import { addDays } from '@/shared/dates';
 import { sequelize } from './database';
 import { log } from './log';
 import type { Desk } from './models/desk';
+import { seedCloses } from './seed/closes';
 import { actorOn, personNamed, seedChanges, seedPeople, type People } from './seed/people';
+import { seedPolicies } from './seed/policies';
 import { seedQuotes, type Listed } from './seed/quotes';
 import { commodityBooks, seedTrades, treasuryBooks } from './seed/trades';
 import { commodities, treasury, type SeedUnderlying } from './seed/underlyings';
 import { writeDemonstration } from './seed/unfinished';
-import { today } from './services/access';
 import { createDesk } from './services/firm';
-import { approveClose, enterClose } from './services/market-data';
 import { closePasswordThreads } from './services/passwords';
 import { closePricingThreads } from './services/pricing';
 import { createUnderlying } from './services/underlyings';
-
-/** The last weekday before a day. */
-function businessDayBefore(date: string): string {
-  const before = addDays(date, -1);
-  const weekday = new Date(before).getUTCDay();
-  return weekday === 0 || weekday === 6 ? businessDayBefore(before) : before;
-}
 
 async function list(desk: Desk, underlyings: readonly SeedUnderlying[]): Promise<Listed[]> {
   const listed: Listed[] = [];
@@ -35,26 +27,21 @@ async function list(desk: Desk, underlyings: readonly SeedUnderlying[]): Promise
   return listed;
 }
 
-async function close(desk: Desk, listed: readonly Listed[], makerId: string, checkerId: string) {
-  const snapshotId = await enterClose(desk, {
-    date: businessDayBefore(today(desk)),
-    enteredById: makerId,
-    closes: listed.map(({ id, underlying }) => ({ underlyingId: id, market: underlying.market })),
-  });
-  await approveClose(desk, snapshotId, checkerId);
-}
-
 async function fillDesk(
   desk: Desk,
   people: People,
   underlyings: readonly SeedUnderlying[],
-  accounts: { makers: string[]; checker: string },
+  accounts: { makers: string[]; checkers: [string, string] },
   patternCount: number,
 ) {
   const makers = accounts.makers.map((account) => personNamed(people, account));
   const listed = await list(desk, underlyings);
-  await close(desk, listed, makers[0].userId, personNamed(people, accounts.checker).userId);
   const actors = await Promise.all(makers.map((maker) => actorOn(desk, maker)));
+  const [checker, second] = await Promise.all(
+    accounts.checkers.map((account) => actorOn(desk, personNamed(people, account))),
+  );
+  await seedPolicies(listed, checker, second);
+  await seedCloses({ listed, maker: actors[0], checker, seed: desk.name });
   await seedQuotes(actors, listed, patternCount);
 }
 
@@ -70,11 +57,11 @@ async function write() {
     expiryCutoff: '14:00',
   });
   const people = await seedPeople([grain, money]);
-  const checker = 'risk-officer';
+  const checkers: [string, string] = ['risk-officer', 'second-risk-officer'];
   const grainMakers = ['analyst', 'second-analyst', 'desk-head'];
-  await fillDesk(grain, people, commodities, { makers: grainMakers, checker }, 4);
+  await fillDesk(grain, people, commodities, { makers: grainMakers, checkers }, 4);
   const moneyMakers = ['treasury-analyst', 'treasury-desk-head'];
-  await fillDesk(money, people, treasury, { makers: moneyMakers, checker }, 3);
+  await fillDesk(money, people, treasury, { makers: moneyMakers, checkers }, 3);
   const actorsOn = (desk: Desk, accounts: readonly string[]) =>
     Promise.all(accounts.map((account) => actorOn(desk, personNamed(people, account))));
   await seedTrades({

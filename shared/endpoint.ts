@@ -34,6 +34,8 @@ export type Endpoint<
   body: Body;
   /** A body that the schema takes: shown on the API's page and used by the role test. */
   bodyExample: unknown;
+  /** A larger body is refused before it is read. */
+  bodyLimitBytes: number;
   response: Response;
   successStatus: 200 | 201;
   /** A creating POST: needs an Idempotency-Key header. */
@@ -61,7 +63,13 @@ type Spec<
 };
 
 /** A body never comes without an example that the schema takes. */
-type BodySpec<Body extends z.ZodType> = { body: Body; bodyExample: z.input<Body> };
+type BodySpec<Body extends z.ZodType> = {
+  body: Body;
+  bodyExample: z.input<Body>;
+  bodyLimitBytes?: number;
+};
+
+const usualBodyLimitBytes = 100 * 1024;
 
 export function defineEndpoint<
   const A extends Access,
@@ -88,6 +96,7 @@ export function defineEndpoint(
     query: spec.query ?? nothing,
     body: spec.body ?? nothing,
     bodyExample: spec.bodyExample ?? {},
+    bodyLimitBytes: spec.bodyLimitBytes ?? usualBodyLimitBytes,
     response: spec.response,
     successStatus: spec.successStatus ?? 200,
     idempotent: spec.idempotent ?? false,

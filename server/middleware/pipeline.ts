@@ -66,7 +66,7 @@ export const pipeline =
     checkOrigin(endpoint, req);
     const signedIn = endpoint.access === 'public' ? null : await authenticate(req);
     const actor = signedIn ? await authorize(endpoint, signedIn, req.params.deskId) : null;
-    await readJsonBody(req, res);
+    await readJsonBody(req, res, endpoint.bodyLimitBytes);
     const input = validate(endpoint, req);
     const requestKey = requestKeyOf(endpoint, req, signedIn, input);
     res.status(endpoint.successStatus);

@@ -4,6 +4,8 @@ import { market } from './0003-market';
 import { quotes } from './0004-quotes';
 import { chain } from './0010-chain';
 import { trades } from './0011-trades';
+import { marketData } from './0012-market-data';
+import { studies } from './0014-studies';
 import { exportFiles } from './0015-exports';
 import type { Migration } from './migration';
 
@@ -15,5 +17,7 @@ export const migrations: readonly Migration[] = [
   quotes,
   chain,
   trades,
+  marketData,
+  studies,
   exportFiles,
 ];

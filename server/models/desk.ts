@@ -18,6 +18,8 @@ export class Desk extends Model<InferAttributes<Desk>, InferCreationAttributes<D
   declare lastQuoteNumber: CreationOptional<number>;
   /** Counts the desk's trades in the same way. */
   declare lastTradeNumber: CreationOptional<number>;
+  /** Counts the desk's valuation runs in the same way. */
+  declare lastRunNumber: CreationOptional<number>;
   declare createdAt: CreationOptional<Date>;
 }
 
@@ -29,6 +31,7 @@ Desk.init(
     expiryCutoff: { type: DataTypes.TEXT, allowNull: false },
     lastQuoteNumber: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 0 },
     lastTradeNumber: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 0 },
+    lastRunNumber: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 0 },
     createdAt: { type: DataTypes.DATE(3), allowNull: false, defaultValue: DataTypes.NOW },
   },
   { sequelize, tableName: 'desks' },

@@ -8,9 +8,12 @@ import { exportRoutes } from './exports';
 import { bookRoutes } from './books';
 import { healthRoutes } from './health';
 import { historyRoutes } from './history';
+import { marketDataRoutes } from './market-data';
 import { peopleRoutes } from './people';
+import { policyRoutes } from './policies';
 import { quoteRoutes } from './quotes';
 import { sessionRoutes } from './sessions';
+import { studyRoutes } from './studies';
 import { tradeRoutes } from './trades';
 import { underlyingRoutes } from './underlyings';
 
@@ -20,8 +23,11 @@ export const routes: readonly Route[] = [
   ...peopleRoutes,
   ...underlyingRoutes,
   ...quoteRoutes,
+  ...marketDataRoutes,
+  ...policyRoutes,
   ...bookRoutes,
   ...tradeRoutes,
+  ...studyRoutes,
   ...chainRoutes,
   ...historyRoutes,
   ...exportRoutes,

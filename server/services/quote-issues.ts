@@ -1,7 +1,7 @@
 /** What may be wrong with a quote besides its shape, each at the field where it is mended. */
 import type { PricingRequest } from '@/pricing/contract';
 import { checkRequest } from '@/pricing/index';
-import type { QuoteDraft } from '@/shared/contracts/quotes';
+import type { QuoteTerms } from '@/shared/contracts/quotes';
 import type { Issue } from '@/shared/errors';
 import { expiryInstantMs, type DeskClock } from '@/shared/quote-terms';
 import type { Underlying } from '../models/underlying';
@@ -25,7 +25,9 @@ export const ticketIssue = ({ path, code, message }: Issue): Issue => ({
   message,
 });
 
-function instantIssues(draft: QuoteDraft, desk: DeskClock): Issue[] {
+type OptionTerms = Pick<QuoteTerms, 'expiryDate' | 'market' | 'pricedAt'>;
+
+function instantIssues(draft: OptionTerms, desk: DeskClock): Issue[] {
   const pricedAt = Date.parse(draft.pricedAt);
   const age = Date.now() - pricedAt;
   const issues: Issue[] = [];
@@ -44,7 +46,7 @@ function instantIssues(draft: QuoteDraft, desk: DeskClock): Issue[] {
   return issues;
 }
 
-function underlyingIssues(draft: QuoteDraft, underlying: Underlying | null): Issue[] {
+function underlyingIssues(draft: OptionTerms, underlying: Underlying | null): Issue[] {
   if (!underlying)
     return [
       {
@@ -68,7 +70,7 @@ function underlyingIssues(draft: QuoteDraft, underlying: Underlying | null): Iss
 
 /** Every complaint at once; a past expiry is named by its date and not a second time by the engine. */
 export function quoteIssues(
-  draft: QuoteDraft,
+  draft: OptionTerms,
   underlying: Underlying | null,
   desk: DeskClock,
   request: PricingRequest,

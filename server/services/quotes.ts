@@ -15,6 +15,7 @@ import { Underlying } from '../models/underlying';
 import type { DeskActor } from './access';
 import { containing } from './containing';
 import { after, pageOf } from './page';
+import { activePolicy, toleranceOf } from './policies';
 import { priceRoutes } from './pricing';
 import { quoteIssues, ticketIssue } from './quote-issues';
 import { quoteOf, summaryOf, withUnderlyingAndMaker } from './quote-rows';
@@ -74,7 +75,8 @@ export async function createQuote(
   const { market, pricedAt, ...terms } = draft;
   const { underlying, expiryYears, routes, primary } = await priceDraft(desk, draft);
   const { value, errorEstimate } = primary.result;
-  const { verdict, refuted } = compareRoutes(routes, underlying.tolerance);
+  const tolerance = toleranceOf(await activePolicy(desk.id), underlying, draft);
+  const { verdict, refuted } = compareRoutes(routes, tolerance);
   const total = totalOf(value, draft);
   const close = await findLastClose(desk.id);
   return writeOnce(async (transaction) => {
@@ -94,7 +96,7 @@ export async function createQuote(
         value,
         errorEstimate,
         total,
-        tolerance: underlying.tolerance,
+        tolerance,
         verdict,
         refuted,
         primaryRoute: primary.name,

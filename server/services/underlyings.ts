@@ -4,8 +4,9 @@ import type { Desk } from '../models/desk';
 import { MarketQuote } from '../models/market-quote';
 import { MarketSnapshot } from '../models/market-snapshot';
 import { Underlying } from '../models/underlying';
+import { activePolicy, toleranceRuleOf } from './policies';
 
-export type UnderlyingDraft = Omit<UnderlyingOnTheWire, 'id' | 'close'>;
+export type UnderlyingDraft = Omit<UnderlyingOnTheWire, 'id' | 'close' | 'moneyTolerance'>;
 
 /** The market numbers of a row, in the shape that the engine takes. */
 export function marketOf(row: {
@@ -37,6 +38,7 @@ export async function listUnderlyings(desk: Desk): Promise<UnderlyingOnTheWire[]
       ['id', 'ASC'],
     ],
   });
+  const policy = await activePolicy(desk.id);
   const snapshot = await findLastClose(desk.id);
   const closes = snapshot
     ? await MarketQuote.findAll({ where: { deskId: desk.id, snapshotId: snapshot.id } })
@@ -55,7 +57,7 @@ export async function listUnderlyings(desk: Desk): Promise<UnderlyingOnTheWire[]
     unit: row.unit,
     contractSize: row.contractSize,
     priceDecimals: row.priceDecimals,
-    tolerance: row.tolerance,
+    ...toleranceRuleOf(policy, row),
     close: closeOf(row.id),
   }));
 }

@@ -65,6 +65,7 @@ export const recordKinds = [
   'override',
   'study',
 ] as const;
+export type RecordKind = (typeof recordKinds)[number];
 
 export const recordBodySchema = z.strictObject({
   kind: z.enum(recordKinds).describe('Kind of record'),

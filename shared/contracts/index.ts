@@ -4,9 +4,12 @@ import * as chain from './chain';
 import * as historyExports from './exports';
 import * as health from './health';
 import * as history from './history';
+import * as marketData from './market-data';
 import * as people from './people';
+import * as policies from './policies';
 import * as quotes from './quotes';
 import * as sessions from './sessions';
+import * as studies from './studies';
 import * as tradeActs from './trade-acts';
 import * as trades from './trades';
 import * as underlyings from './underlyings';
@@ -30,6 +33,18 @@ export const endpoints = {
   createQuote: quotes.createQuote,
   listQuotes: quotes.listQuotes,
   getQuote: quotes.getQuote,
+  listSnapshots: marketData.listSnapshots,
+  getSnapshot: marketData.getSnapshot,
+  getPreviousClose: marketData.getPreviousClose,
+  createSnapshot: marketData.createSnapshot,
+  saveSnapshot: marketData.saveSnapshot,
+  approveSnapshot: marketData.approveSnapshot,
+  restateSnapshot: marketData.restateSnapshot,
+  checkMarketFile: marketData.checkMarketFile,
+  listPolicies: policies.listPolicies,
+  createPolicy: policies.createPolicy,
+  savePolicy: policies.savePolicy,
+  approvePolicy: policies.approvePolicy,
   createBook: books.createBook,
   listBooks: books.listBooks,
   listTrades: trades.listTrades,
@@ -40,6 +55,13 @@ export const endpoints = {
   returnTrade: tradeActs.returnTrade,
   closeTrade: tradeActs.closeTrade,
   recordExpiry: tradeActs.recordExpiry,
+  createStudy: studies.createStudy,
+  listStudies: studies.listStudies,
+  getStudy: studies.getStudy,
+  getStudyFile: studies.getStudyFile,
+  cancelStudy: studies.cancelStudy,
+  signOffStudy: studies.signOffStudy,
+  sendBackStudy: studies.sendBackStudy,
   getChains: chain.getChains,
   startVerification: chain.startVerification,
   getVerification: chain.getVerification,

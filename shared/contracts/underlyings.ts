@@ -11,6 +11,8 @@ import {
 import { marketSchema } from './pricing';
 
 export const underlyingKinds = ['share', 'index', 'currency-pair', 'future'] as const;
+export type UnderlyingKind = (typeof underlyingKinds)[number];
+export const underlyingKindSchema = z.enum(underlyingKinds).describe('What it is');
 
 /** The desk's last approved close of one underlying. */
 const closeSchema = z.object({
@@ -23,7 +25,7 @@ export const underlyingSchema = z.object({
   id: idSchema,
   symbol: z.string().describe('Short name'),
   name: z.string().describe('Full name'),
-  kind: z.enum(underlyingKinds).describe('What it is'),
+  kind: underlyingKindSchema,
   currency: currencySchema.describe('Quote currency'),
   unit: z.string().describe('What one unit is, such as t or share'),
   contractSize: decimalSchema.describe('Units in one lot'),
@@ -35,6 +37,9 @@ export const underlyingSchema = z.object({
     'quote currency per unit',
     'How far routes may lie apart and still agree, per unit',
   ),
+  moneyTolerance: decimalSchema
+    .nullable()
+    .describe('The same for a whole position, in the quote currency; null where none is set'),
   close: closeSchema.nullable().describe('Last approved close; null where none is approved yet'),
 });
 export type Underlying = z.infer<typeof underlyingSchema>;

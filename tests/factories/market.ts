@@ -28,10 +28,7 @@ export async function makeApprovedClose(desk: Desk, underlying: Underlying, date
   const snapshot = await MarketSnapshot.create({
     deskId: desk.id,
     date,
-    status: 'approved',
     enteredById: maker.id,
-    approvedById: checker.id,
-    approvedAt: new Date(),
   });
   await MarketQuote.create({
     snapshotId: snapshot.id,
@@ -42,5 +39,6 @@ export async function makeApprovedClose(desk: Desk, underlying: Underlying, date
     yield: underlying.kind === 'future' ? null : 0.01,
     volatility: 0.245,
   });
+  await snapshot.update({ status: 'approved', approvedById: checker.id, approvedAt: new Date() });
   return snapshot;
 }

@@ -143,7 +143,7 @@ describe('the role that serves', () => {
     'UPDATE memberships SET desk_id = desk_id',
     'UPDATE desks SET time_zone = time_zone',
     'UPDATE market_quotes SET spot = 1',
-    'UPDATE market_snapshots SET date = date',
+    'UPDATE market_snapshots SET entered_by_id = entered_by_id',
     "INSERT INTO schema_migrations (name) VALUES ('mine')",
     'SET SESSION AUTHORIZATION postgres',
   ])('may not: %s', async (sql) => {

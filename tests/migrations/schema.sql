@@ -51,6 +51,43 @@ CREATE FUNCTION public.chain_hash(previous text, chain text, pos bigint, at text
         ''::bytea ORDER BY place)), 'hex')
     FROM unnest(ARRAY[chain, pos::text, at, body]) WITH ORDINALITY AS fields (field, place)
   $$;
+CREATE FUNCTION public.guard_approved() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+  BEGIN
+    IF TG_OP = 'INSERT' THEN
+      IF NEW.status = 'draft' THEN RETURN NEW; END IF;
+    ELSIF TG_OP = 'UPDATE' THEN
+      IF OLD.status = 'draft' AND NEW.status IN ('draft', 'approved') THEN RETURN NEW; END IF;
+      IF OLD.status = 'approved' AND NEW.status = 'superseded' AND
+        (to_jsonb(NEW) - ARRAY['status', 'superseded_by_id', 'version'])
+          = (to_jsonb(OLD) - ARRAY['status', 'superseded_by_id', 'version'])
+      THEN RETURN NEW; END IF;
+    END IF;
+    RAISE EXCEPTION '% of a row of % is refused: a draft is made, approved, and then only superseded',
+      TG_OP, TG_TABLE_NAME USING ERRCODE = 'integrity_constraint_violation';
+  END $$;
+CREATE FUNCTION public.guard_market_quote() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+  DECLARE
+    snapshot uuid := CASE TG_OP WHEN 'INSERT' THEN NEW.snapshot_id ELSE OLD.snapshot_id END;
+    found_status text;
+  BEGIN
+    SELECT status INTO found_status FROM market_snapshots WHERE id = snapshot FOR SHARE;
+    IF TG_OP <> 'UPDATE' AND found_status = 'draft' THEN
+      RETURN CASE TG_OP WHEN 'INSERT' THEN NEW ELSE OLD END;
+    END IF;
+    RAISE EXCEPTION '% of a quote is refused: its snapshot is no draft, or quotes are replaced whole',
+      TG_OP USING ERRCODE = 'integrity_constraint_violation';
+  END $$;
+CREATE FUNCTION public.guard_truncate() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+  BEGIN
+    RAISE EXCEPTION 'TRUNCATE of % is refused: what was approved stays', TG_TABLE_NAME
+      USING ERRCODE = 'integrity_constraint_violation';
+  END $$;
 CREATE FUNCTION public.lock_chain(chain_name text) RETURNS bigint
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
@@ -280,10 +317,25 @@ CREATE TABLE public.market_snapshots (
     entered_at timestamp(3) with time zone NOT NULL,
     approved_by_id uuid,
     approved_at timestamp(3) with time zone,
+    version integer DEFAULT 0 NOT NULL,
+    source text DEFAULT 'typed'::text NOT NULL,
+    saved_by_ids uuid[] DEFAULT '{}'::uuid[] NOT NULL,
+    saved_at timestamp(3) with time zone,
+    reason text,
+    restates_id uuid,
+    superseded_by_id uuid,
     CONSTRAINT market_snapshots_check CHECK ((approved_by_id <> entered_by_id)),
     CONSTRAINT market_snapshots_check1 CHECK (((approved_by_id IS NULL) = (approved_at IS NULL))),
     CONSTRAINT market_snapshots_check2 CHECK (((approved_at IS NULL) = (status = 'draft'::text))),
-    CONSTRAINT market_snapshots_status_check CHECK ((status = ANY (ARRAY['draft'::text, 'approved'::text, 'superseded'::text])))
+    CONSTRAINT market_snapshots_check3 CHECK (((source = 'restatement'::text) = (restates_id IS NOT NULL))),
+    CONSTRAINT market_snapshots_check4 CHECK (((source = 'restatement'::text) = (reason IS NOT NULL))),
+    CONSTRAINT market_snapshots_check5 CHECK (((superseded_by_id IS NOT NULL) = (status = 'superseded'::text))),
+    CONSTRAINT market_snapshots_check6 CHECK ((superseded_by_id <> id)),
+    CONSTRAINT market_snapshots_check7 CHECK ((approved_by_id <> ALL (saved_by_ids))),
+    CONSTRAINT market_snapshots_reason_check CHECK ((reason <> ''::text)),
+    CONSTRAINT market_snapshots_source_check CHECK ((source = ANY (ARRAY['typed'::text, 'file'::text, 'restatement'::text]))),
+    CONSTRAINT market_snapshots_status_check CHECK ((status = ANY (ARRAY['draft'::text, 'approved'::text, 'superseded'::text]))),
+    CONSTRAINT market_snapshots_version_check CHECK ((version >= 0))
 );
 CREATE TABLE public.memberships (
     id uuid NOT NULL,
@@ -298,6 +350,50 @@ CREATE TABLE public.memberships (
     CONSTRAINT memberships_role_check CHECK ((role = ANY (ARRAY['analyst'::text, 'desk-head'::text, 'risk-officer'::text, 'auditor'::text]))),
     CONSTRAINT memberships_suspension_reason_check CHECK ((suspension_reason <> ''::text)),
     CONSTRAINT memberships_version_check CHECK ((version >= 0))
+);
+CREATE TABLE public.pricing_policies (
+    id uuid NOT NULL,
+    desk_id uuid NOT NULL,
+    number integer NOT NULL,
+    status text NOT NULL,
+    version integer NOT NULL,
+    primary_european text NOT NULL,
+    check_european text NOT NULL,
+    primary_american text NOT NULL,
+    check_american text NOT NULL,
+    sizes jsonb,
+    tolerance_share double precision,
+    unit_tolerance jsonb NOT NULL,
+    money_tolerance jsonb NOT NULL,
+    reason text NOT NULL,
+    author_id uuid NOT NULL,
+    authored_at timestamp(3) with time zone NOT NULL,
+    saved_by_ids uuid[] NOT NULL,
+    saved_at timestamp(3) with time zone,
+    approved_by_id uuid,
+    approved_at timestamp(3) with time zone,
+    superseded_by_id uuid,
+    CONSTRAINT pricing_policies_check CHECK ((primary_european <> check_european)),
+    CONSTRAINT pricing_policies_check1 CHECK ((primary_american <> check_american)),
+    CONSTRAINT pricing_policies_check2 CHECK (((primary_american <> 'closed-form'::text) AND (check_american <> 'closed-form'::text))),
+    CONSTRAINT pricing_policies_check3 CHECK (((sizes IS NULL) <> (tolerance_share IS NULL))),
+    CONSTRAINT pricing_policies_check4 CHECK (((approved_by_id <> author_id) AND (approved_by_id <> ALL (saved_by_ids)))),
+    CONSTRAINT pricing_policies_check5 CHECK (((approved_by_id IS NULL) = (approved_at IS NULL))),
+    CONSTRAINT pricing_policies_check6 CHECK (((approved_at IS NULL) = (status = 'draft'::text))),
+    CONSTRAINT pricing_policies_check7 CHECK (((superseded_by_id IS NOT NULL) = (status = 'superseded'::text))),
+    CONSTRAINT pricing_policies_check8 CHECK ((superseded_by_id <> id)),
+    CONSTRAINT pricing_policies_check_american_check CHECK ((check_american = ANY (ARRAY['closed-form'::text, 'heat-crank-nicolson'::text, 'lattice-crr'::text, 'lattice-symmetric'::text]))),
+    CONSTRAINT pricing_policies_check_european_check CHECK ((check_european = ANY (ARRAY['closed-form'::text, 'heat-crank-nicolson'::text, 'lattice-crr'::text, 'lattice-symmetric'::text]))),
+    CONSTRAINT pricing_policies_money_tolerance_check CHECK ((jsonb_typeof(money_tolerance) = 'object'::text)),
+    CONSTRAINT pricing_policies_number_check CHECK ((number >= 1)),
+    CONSTRAINT pricing_policies_primary_american_check CHECK ((primary_american = ANY (ARRAY['closed-form'::text, 'heat-crank-nicolson'::text, 'lattice-crr'::text, 'lattice-symmetric'::text]))),
+    CONSTRAINT pricing_policies_primary_european_check CHECK ((primary_european = ANY (ARRAY['closed-form'::text, 'heat-crank-nicolson'::text, 'lattice-crr'::text, 'lattice-symmetric'::text]))),
+    CONSTRAINT pricing_policies_reason_check CHECK ((reason <> ''::text)),
+    CONSTRAINT pricing_policies_sizes_check CHECK ((jsonb_typeof(sizes) = 'object'::text)),
+    CONSTRAINT pricing_policies_status_check CHECK ((status = ANY (ARRAY['draft'::text, 'approved'::text, 'superseded'::text]))),
+    CONSTRAINT pricing_policies_tolerance_share_check CHECK (((tolerance_share > (0)::double precision) AND (tolerance_share <= (1)::double precision))),
+    CONSTRAINT pricing_policies_unit_tolerance_check CHECK ((jsonb_typeof(unit_tolerance) = 'object'::text)),
+    CONSTRAINT pricing_policies_version_check CHECK ((version >= 0))
 );
 CREATE TABLE public.quotes (
     id uuid NOT NULL,
@@ -373,6 +469,64 @@ CREATE TABLE public.sessions (
     CONSTRAINT sessions_check1 CHECK (((ended_at IS NULL) = (end_cause IS NULL))),
     CONSTRAINT sessions_end_cause_check CHECK ((end_cause = ANY (ARRAY['signed-out'::text, 'token-reused'::text]))),
     CONSTRAINT sessions_refresh_hash_check CHECK ((refresh_hash ~ '^[0-9a-f]{64}$'::text))
+);
+CREATE TABLE public.studies (
+    id uuid NOT NULL,
+    desk_id uuid NOT NULL,
+    ordinal integer NOT NULL,
+    number text GENERATED ALWAYS AS (('S-'::text || lpad((ordinal)::text, GREATEST(4, length((ordinal)::text)), '0'::text))) STORED NOT NULL,
+    source text NOT NULL,
+    quote_id uuid,
+    trade_version_id uuid,
+    exception_id uuid,
+    underlying_id uuid NOT NULL,
+    terms jsonb NOT NULL,
+    request jsonb NOT NULL,
+    reference jsonb NOT NULL,
+    ladders jsonb NOT NULL,
+    orders jsonb,
+    engine text NOT NULL,
+    status text NOT NULL,
+    total integer NOT NULL,
+    done integer NOT NULL,
+    version integer NOT NULL,
+    started_by_id uuid NOT NULL,
+    created_at timestamp(3) with time zone NOT NULL,
+    finished_at timestamp(3) with time zone,
+    decided_by_id uuid,
+    decided_at timestamp(3) with time zone,
+    decision_comment text,
+    CONSTRAINT studies_check CHECK (((done >= 0) AND (done <= total))),
+    CONSTRAINT studies_check1 CHECK (((source = 'quote'::text) = (quote_id IS NOT NULL))),
+    CONSTRAINT studies_check2 CHECK (((source = 'trade'::text) = (trade_version_id IS NOT NULL))),
+    CONSTRAINT studies_check3 CHECK (((orders IS NOT NULL) = (status = ANY (ARRAY['finished'::text, 'signed-off'::text, 'sent-back'::text])))),
+    CONSTRAINT studies_check4 CHECK (((decided_by_id IS NOT NULL) = (status = ANY (ARRAY['signed-off'::text, 'sent-back'::text])))),
+    CONSTRAINT studies_check5 CHECK (((decided_by_id IS NULL) = (decided_at IS NULL))),
+    CONSTRAINT studies_check6 CHECK (((decided_by_id IS NULL) = (decision_comment IS NULL))),
+    CONSTRAINT studies_check7 CHECK ((decided_by_id <> started_by_id)),
+    CONSTRAINT studies_decision_comment_check CHECK ((decision_comment <> ''::text)),
+    CONSTRAINT studies_engine_check CHECK ((engine <> ''::text)),
+    CONSTRAINT studies_ladders_check CHECK ((jsonb_typeof(ladders) = 'array'::text)),
+    CONSTRAINT studies_orders_check CHECK ((jsonb_typeof(orders) = 'array'::text)),
+    CONSTRAINT studies_ordinal_check CHECK ((ordinal >= 1)),
+    CONSTRAINT studies_reference_check CHECK ((jsonb_typeof(reference) = 'object'::text)),
+    CONSTRAINT studies_request_check CHECK ((jsonb_typeof(request) = 'object'::text)),
+    CONSTRAINT studies_source_check CHECK ((source = ANY (ARRAY['trade'::text, 'quote'::text, 'free'::text]))),
+    CONSTRAINT studies_status_check CHECK ((status = ANY (ARRAY['queued'::text, 'running'::text, 'finished'::text, 'cancelled'::text, 'signed-off'::text, 'sent-back'::text]))),
+    CONSTRAINT studies_terms_check CHECK ((jsonb_typeof(terms) = 'object'::text)),
+    CONSTRAINT studies_total_check CHECK ((total > 0)),
+    CONSTRAINT studies_version_check CHECK ((version >= 0))
+);
+CREATE TABLE public.study_rows (
+    study_id uuid NOT NULL,
+    route text NOT NULL,
+    ordinal integer NOT NULL,
+    result jsonb NOT NULL,
+    milliseconds double precision NOT NULL,
+    CONSTRAINT study_rows_milliseconds_check CHECK (((milliseconds >= (0)::double precision) AND (milliseconds < 'Infinity'::double precision))),
+    CONSTRAINT study_rows_ordinal_check CHECK ((ordinal >= 0)),
+    CONSTRAINT study_rows_result_check CHECK ((jsonb_typeof(result) = 'object'::text)),
+    CONSTRAINT study_rows_route_check CHECK ((route <> ''::text))
 );
 CREATE TABLE public.trade_versions (
     id uuid NOT NULL,
@@ -551,6 +705,12 @@ ALTER TABLE ONLY public.memberships
     ADD CONSTRAINT memberships_desk_id_user_id_key UNIQUE (desk_id, user_id);
 ALTER TABLE ONLY public.memberships
     ADD CONSTRAINT memberships_pkey PRIMARY KEY (id);
+ALTER TABLE ONLY public.pricing_policies
+    ADD CONSTRAINT pricing_policies_desk_id_id_key UNIQUE (desk_id, id);
+ALTER TABLE ONLY public.pricing_policies
+    ADD CONSTRAINT pricing_policies_desk_id_number_key UNIQUE (desk_id, number);
+ALTER TABLE ONLY public.pricing_policies
+    ADD CONSTRAINT pricing_policies_pkey PRIMARY KEY (id);
 ALTER TABLE ONLY public.quotes
     ADD CONSTRAINT quotes_desk_id_number_key UNIQUE (desk_id, number);
 ALTER TABLE ONLY public.quotes
@@ -559,6 +719,12 @@ ALTER TABLE ONLY public.schema_migrations
     ADD CONSTRAINT schema_migrations_pkey PRIMARY KEY (name);
 ALTER TABLE ONLY public.sessions
     ADD CONSTRAINT sessions_pkey PRIMARY KEY (id);
+ALTER TABLE ONLY public.studies
+    ADD CONSTRAINT studies_desk_id_ordinal_key UNIQUE (desk_id, ordinal);
+ALTER TABLE ONLY public.studies
+    ADD CONSTRAINT studies_pkey PRIMARY KEY (id);
+ALTER TABLE ONLY public.study_rows
+    ADD CONSTRAINT study_rows_pkey PRIMARY KEY (study_id, route, ordinal);
 ALTER TABLE ONLY public.trade_versions
     ADD CONSTRAINT trade_versions_pkey PRIMARY KEY (id);
 ALTER TABLE ONLY public.trade_versions
@@ -597,16 +763,34 @@ CREATE INDEX grants_desk_id_made_at ON public.grants USING btree (desk_id, made_
 CREATE INDEX grants_desk_id_subject_id ON public.grants USING btree (desk_id, subject_id, made_at DESC, id DESC);
 CREATE INDEX idempotency_keys_created_at ON public.idempotency_keys USING btree (created_at);
 CREATE UNIQUE INDEX market_snapshots_approved ON public.market_snapshots USING btree (desk_id, date) WHERE (status = 'approved'::text);
+CREATE UNIQUE INDEX market_snapshots_draft ON public.market_snapshots USING btree (desk_id, date) WHERE (status = 'draft'::text);
+CREATE INDEX market_snapshots_listed ON public.market_snapshots USING btree (desk_id, date, entered_at, id);
 CREATE INDEX memberships_user_id ON public.memberships USING btree (user_id);
+CREATE UNIQUE INDEX pricing_policies_approved ON public.pricing_policies USING btree (desk_id) WHERE (status = 'approved'::text);
+CREATE UNIQUE INDEX pricing_policies_draft ON public.pricing_policies USING btree (desk_id) WHERE (status = 'draft'::text);
 CREATE INDEX quotes_desk_id_created_at ON public.quotes USING btree (desk_id, created_at DESC, id DESC);
 CREATE INDEX sessions_expires_at ON public.sessions USING btree (expires_at);
 CREATE INDEX sessions_user_id ON public.sessions USING btree (user_id);
+CREATE INDEX studies_desk_id ON public.studies USING btree (desk_id, created_at DESC, id DESC);
+CREATE INDEX studies_quote_id ON public.studies USING btree (quote_id) WHERE (quote_id IS NOT NULL);
 CREATE UNIQUE INDEX trade_versions_approved ON public.trade_versions USING btree (trade_id) WHERE (state = 'approved'::text);
 CREATE UNIQUE INDEX trade_versions_waiting ON public.trade_versions USING btree (trade_id) WHERE (state = 'proposed'::text);
 CREATE INDEX trades_book_id_expiry_at ON public.trades USING btree (book_id, expiry_at, id);
 CREATE INDEX trades_book_id_ordinal ON public.trades USING btree (book_id, ordinal, id);
 CREATE INDEX trades_desk_id_expiry_at ON public.trades USING btree (desk_id, expiry_at, id);
 CREATE INDEX trades_waiting ON public.trades USING btree (desk_id, ordinal) WHERE (status = ANY (ARRAY['proposed'::text, 'amended'::text]));
+CREATE TRIGGER guard_row BEFORE INSERT OR DELETE OR UPDATE ON public.market_quotes FOR EACH ROW EXECUTE FUNCTION public.guard_market_quote();
+ALTER TABLE public.market_quotes ENABLE ALWAYS TRIGGER guard_row;
+CREATE TRIGGER guard_row BEFORE INSERT OR DELETE OR UPDATE ON public.market_snapshots FOR EACH ROW EXECUTE FUNCTION public.guard_approved();
+ALTER TABLE public.market_snapshots ENABLE ALWAYS TRIGGER guard_row;
+CREATE TRIGGER guard_row BEFORE INSERT OR DELETE OR UPDATE ON public.pricing_policies FOR EACH ROW EXECUTE FUNCTION public.guard_approved();
+ALTER TABLE public.pricing_policies ENABLE ALWAYS TRIGGER guard_row;
+CREATE TRIGGER guard_truncate BEFORE TRUNCATE ON public.market_quotes FOR EACH STATEMENT EXECUTE FUNCTION public.guard_truncate();
+ALTER TABLE public.market_quotes ENABLE ALWAYS TRIGGER guard_truncate;
+CREATE TRIGGER guard_truncate BEFORE TRUNCATE ON public.market_snapshots FOR EACH STATEMENT EXECUTE FUNCTION public.guard_truncate();
+ALTER TABLE public.market_snapshots ENABLE ALWAYS TRIGGER guard_truncate;
+CREATE TRIGGER guard_truncate BEFORE TRUNCATE ON public.pricing_policies FOR EACH STATEMENT EXECUTE FUNCTION public.guard_truncate();
+ALTER TABLE public.pricing_policies ENABLE ALWAYS TRIGGER guard_truncate;
 CREATE TRIGGER refuse_row BEFORE DELETE OR UPDATE ON public.chain_anchors FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
 ALTER TABLE public.chain_anchors ENABLE ALWAYS TRIGGER refuse_row;
 CREATE TRIGGER refuse_row BEFORE DELETE OR UPDATE ON public.chain_entries FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
@@ -659,11 +843,23 @@ ALTER TABLE ONLY public.market_snapshots
 ALTER TABLE ONLY public.market_snapshots
     ADD CONSTRAINT market_snapshots_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
 ALTER TABLE ONLY public.market_snapshots
+    ADD CONSTRAINT market_snapshots_desk_id_restates_id_fkey FOREIGN KEY (desk_id, restates_id) REFERENCES public.market_snapshots(desk_id, id);
+ALTER TABLE ONLY public.market_snapshots
+    ADD CONSTRAINT market_snapshots_desk_id_superseded_by_id_fkey FOREIGN KEY (desk_id, superseded_by_id) REFERENCES public.market_snapshots(desk_id, id) DEFERRABLE INITIALLY DEFERRED;
+ALTER TABLE ONLY public.market_snapshots
     ADD CONSTRAINT market_snapshots_entered_by_id_fkey FOREIGN KEY (entered_by_id) REFERENCES public.users(id);
 ALTER TABLE ONLY public.memberships
     ADD CONSTRAINT memberships_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
 ALTER TABLE ONLY public.memberships
     ADD CONSTRAINT memberships_user_id_fkey FOREIGN KEY (user_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.pricing_policies
+    ADD CONSTRAINT pricing_policies_approved_by_id_fkey FOREIGN KEY (approved_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.pricing_policies
+    ADD CONSTRAINT pricing_policies_author_id_fkey FOREIGN KEY (author_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.pricing_policies
+    ADD CONSTRAINT pricing_policies_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
+ALTER TABLE ONLY public.pricing_policies
+    ADD CONSTRAINT pricing_policies_desk_id_superseded_by_id_fkey FOREIGN KEY (desk_id, superseded_by_id) REFERENCES public.pricing_policies(desk_id, id) DEFERRABLE INITIALLY DEFERRED;
 ALTER TABLE ONLY public.quotes
     ADD CONSTRAINT quotes_created_by_id_fkey FOREIGN KEY (created_by_id) REFERENCES public.users(id);
 ALTER TABLE ONLY public.quotes
@@ -674,6 +870,18 @@ ALTER TABLE ONLY public.quotes
     ADD CONSTRAINT quotes_desk_id_underlying_id_fkey FOREIGN KEY (desk_id, underlying_id) REFERENCES public.underlyings(desk_id, id);
 ALTER TABLE ONLY public.sessions
     ADD CONSTRAINT sessions_user_id_fkey FOREIGN KEY (user_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.studies
+    ADD CONSTRAINT studies_decided_by_id_fkey FOREIGN KEY (decided_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.studies
+    ADD CONSTRAINT studies_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
+ALTER TABLE ONLY public.studies
+    ADD CONSTRAINT studies_desk_id_underlying_id_fkey FOREIGN KEY (desk_id, underlying_id) REFERENCES public.underlyings(desk_id, id);
+ALTER TABLE ONLY public.studies
+    ADD CONSTRAINT studies_quote_id_fkey FOREIGN KEY (quote_id) REFERENCES public.quotes(id);
+ALTER TABLE ONLY public.studies
+    ADD CONSTRAINT studies_started_by_id_fkey FOREIGN KEY (started_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.study_rows
+    ADD CONSTRAINT study_rows_study_id_fkey FOREIGN KEY (study_id) REFERENCES public.studies(id);
 ALTER TABLE ONLY public.trade_versions
     ADD CONSTRAINT trade_versions_decided_by_id_fkey FOREIGN KEY (decided_by_id) REFERENCES public.users(id);
 ALTER TABLE ONLY public.trade_versions
@@ -735,16 +943,39 @@ GRANT UPDATE(manifest) ON TABLE public.exports TO app;
 GRANT UPDATE(ready_at) ON TABLE public.exports TO app;
 GRANT SELECT,INSERT ON TABLE public.grants TO app;
 GRANT SELECT,INSERT,DELETE ON TABLE public.idempotency_keys TO app;
-GRANT SELECT,INSERT ON TABLE public.market_quotes TO app;
+GRANT SELECT,INSERT,DELETE ON TABLE public.market_quotes TO app;
 GRANT SELECT,INSERT ON TABLE public.market_snapshots TO app;
+GRANT UPDATE(date) ON TABLE public.market_snapshots TO app;
 GRANT UPDATE(status) ON TABLE public.market_snapshots TO app;
 GRANT UPDATE(approved_by_id) ON TABLE public.market_snapshots TO app;
 GRANT UPDATE(approved_at) ON TABLE public.market_snapshots TO app;
+GRANT UPDATE(version) ON TABLE public.market_snapshots TO app;
+GRANT UPDATE(source) ON TABLE public.market_snapshots TO app;
+GRANT UPDATE(saved_by_ids) ON TABLE public.market_snapshots TO app;
+GRANT UPDATE(saved_at) ON TABLE public.market_snapshots TO app;
+GRANT UPDATE(superseded_by_id) ON TABLE public.market_snapshots TO app;
 GRANT SELECT,INSERT ON TABLE public.memberships TO app;
 GRANT UPDATE(role) ON TABLE public.memberships TO app;
 GRANT UPDATE(suspended_at) ON TABLE public.memberships TO app;
 GRANT UPDATE(suspension_reason) ON TABLE public.memberships TO app;
 GRANT UPDATE(version) ON TABLE public.memberships TO app;
+GRANT SELECT,INSERT ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(status) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(version) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(primary_european) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(check_european) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(primary_american) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(check_american) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(sizes) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(tolerance_share) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(unit_tolerance) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(money_tolerance) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(reason) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(saved_by_ids) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(saved_at) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(approved_by_id) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(approved_at) ON TABLE public.pricing_policies TO app;
+GRANT UPDATE(superseded_by_id) ON TABLE public.pricing_policies TO app;
 GRANT SELECT,INSERT ON TABLE public.quotes TO app;
 GRANT SELECT ON TABLE public.schema_migrations TO app;
 GRANT SELECT,INSERT,DELETE ON TABLE public.sessions TO app;
@@ -753,6 +984,16 @@ GRANT UPDATE(stepped_up_at) ON TABLE public.sessions TO app;
 GRANT UPDATE(rotated_at) ON TABLE public.sessions TO app;
 GRANT UPDATE(ended_at) ON TABLE public.sessions TO app;
 GRANT UPDATE(end_cause) ON TABLE public.sessions TO app;
+GRANT SELECT,INSERT ON TABLE public.studies TO app;
+GRANT UPDATE(orders) ON TABLE public.studies TO app;
+GRANT UPDATE(status) ON TABLE public.studies TO app;
+GRANT UPDATE(done) ON TABLE public.studies TO app;
+GRANT UPDATE(version) ON TABLE public.studies TO app;
+GRANT UPDATE(finished_at) ON TABLE public.studies TO app;
+GRANT UPDATE(decided_by_id) ON TABLE public.studies TO app;
+GRANT UPDATE(decided_at) ON TABLE public.studies TO app;
+GRANT UPDATE(decision_comment) ON TABLE public.studies TO app;
+GRANT SELECT,INSERT ON TABLE public.study_rows TO app;
 GRANT SELECT,INSERT ON TABLE public.trade_versions TO app;
 GRANT UPDATE(state) ON TABLE public.trade_versions TO app;
 GRANT UPDATE(decided_by_id) ON TABLE public.trade_versions TO app;

@@ -10,10 +10,12 @@ import request from 'supertest';
 import type { Desk } from '@/server/models/desk';
 import type { Underlying } from '@/server/models/underlying';
 import { endpoints, type EndpointName } from '@/shared/contracts';
+import { addDays } from '@/shared/dates';
 import type { Endpoint } from '@/shared/endpoint';
 import { deskRoles, permissions, roleHas, type Permission } from '@/shared/permissions';
 import { makeExport, makeVerification } from '../factories/chains';
 import { makeApprovedClose, makeUnderlying } from '../factories/market';
+import { makeDraftClose, makeDraftPolicy, nextPolicyNumber } from '../factories/market-drafts';
 import {
   makeDesk,
   makeGrant,
@@ -25,6 +27,7 @@ import {
   type TestMember,
 } from '../factories/people';
 import { makeQuote, quoteDraft } from '../factories/quotes';
+import { makeStudy, studyDraft } from '../factories/studies';
 import { makeBook, makeTrade, proposal } from '../factories/trades';
 import { storeValuations, valuationPair } from '../factories/valuations';
 
@@ -60,6 +63,22 @@ const withUnderlying = (body: unknown) => ({
 
 let bookCount = 0;
 
+let dayCount = 0;
+
+/** A day of last winter that has no close yet. */
+const freshDay = () => addDays('2025-12-01', (dayCount += 1));
+
+const withOwnClose = (body: unknown) => ({
+  ...(body as Body),
+  date: freshDay(),
+  quotes: [
+    {
+      underlyingId: underlying.id,
+      market: { spot: 212.4, rate: 0.026, carry: 'future', volatility: 0.245 },
+    },
+  ],
+});
+
 /** An American option of last spring, proposed and approved by people who do nothing else here. */
 async function liveTrade(): Promise<string> {
   const approver = await makeUser();
@@ -83,6 +102,27 @@ const special: Partial<Record<EndpointName, (prepared: Prepared) => Promise<Prep
   },
   async recordExpiry({ params, body }) {
     return { params: { ...params, tradeId: await liveTrade() }, body };
+  },
+  async createSnapshot({ params, body }) {
+    return { params, body: withOwnClose(body) };
+  },
+  async saveSnapshot({ params, body }) {
+    return { params, body: withOwnClose(body) };
+  },
+  async restateSnapshot({ params, body }) {
+    const { id } = await makeApprovedClose(desk, underlying, freshDay());
+    return { params: { ...params, snapshotId: id }, body };
+  },
+  async createPolicy({ params, body }) {
+    await nextPolicyNumber(desk);
+    return { params, body };
+  },
+  async createStudy({ params }) {
+    return { params, body: studyDraft(underlying) };
+  },
+  async cancelStudy({ params, body }) {
+    const { id } = await makeStudy(desk, underlying, await makeUser(), 'queued');
+    return { params: { ...params, studyId: id }, body };
   },
   async reinstateMember({ params, body }) {
     const { user } = await makeMember(desk, 'analyst', suspended());
@@ -110,6 +150,13 @@ async function paramsFor(endpoint: Endpoint): Promise<Record<string, string>> {
     params.tradeId = (await makeTrade(await makeBook(desk), underlying, await makeUser())).id;
   if (endpoint.path.includes(':quoteId'))
     params.quoteId = (await makeQuote(desk, underlying, members.analyst.user)).id;
+  if (endpoint.path.includes(':snapshotId'))
+    params.snapshotId = (await makeDraftClose(desk, [underlying], await makeUser(), freshDay())).id;
+  if (endpoint.path.includes(':policyId'))
+    params.policyId = (await makeDraftPolicy(desk, await makeUser())).id;
+  if (endpoint.path.includes(':studyId'))
+    params.studyId = (await makeStudy(desk, underlying, await makeUser())).id;
+  if (endpoint.path.includes(':date')) params.date = '2026-12-01';
   if (endpoint.path.includes(':position')) {
     const [{ position }] = await storeValuations(desk, [...valuationPair(underlying)]);
     params.position = String(position);
@@ -213,7 +260,8 @@ describe.each(deskNames)('%s', (name) => {
 describe.each(deskNames.filter((name) => endpoints[name].stepUp))('%s', (name) => {
   test('asks for the password again', async () => {
     const endpoint: Endpoint = endpoints[name];
-    const { user } = await makeMember(desk, 'desk-head');
+    const role = deskRoles.find((one) => roleHas(one, endpoint.access as Permission));
+    const { user } = await makeMember(desk, role ?? 'desk-head');
     const steppedUpAt = new Date(Date.now() - 6 * 60_000);
     const { token } = await makeSession(user, { steppedUpAt });
     const expected = { status: 403, code: 'step-up-required' };

@@ -67,7 +67,13 @@ test('what it writes is what the screens need', async () => {
     const ofDesk = `WHERE desk_id = (SELECT id FROM desks WHERE name = '${desk}')`;
     expect(await count(`underlyings ${ofDesk}`)).toBeGreaterThanOrEqual(4);
     expect(await count(`quotes ${ofDesk}`)).toBeGreaterThanOrEqual(12);
-    expect(await count(`market_snapshots ${ofDesk} AND status = 'approved'`)).toBe(1);
+    const closes = `market_snapshots ${ofDesk}`;
+    expect(await count(`${closes} AND status = 'approved'`)).toBeGreaterThanOrEqual(40);
+    expect(await count(`${closes} AND status = 'draft'`)).toBe(1);
+    expect(await count(`${closes} AND status = 'superseded'`)).toBe(1);
+    const policies = `pricing_policies ${ofDesk}`;
+    expect(await count(`${policies} AND status = 'approved'`)).toBe(1);
+    expect(await count(`${policies} AND status = 'draft'`)).toBe(1);
   }
   expect(await count('memberships WHERE suspended_at IS NOT NULL')).toBe(1);
   expect(await count('grants WHERE ends_on > current_date')).toBeGreaterThanOrEqual(1);
