@@ -1,7 +1,13 @@
 import { useMutation } from '@tanstack/react-query';
-import type { MethodName } from '@/pricing/contract';
-import type { Quote } from '@/shared/contracts/quotes';
+import type { Contract, Market, MethodName, MethodSettings } from '@/pricing/contract';
 import { pricingThread } from './pricing-thread';
+
+/** What is on record of a price: its inputs, and each route's settings and value. */
+export type StoredPrice = {
+  contract: Contract;
+  market: Market;
+  routes: readonly { method: MethodSettings; value: number }[];
+};
 
 export type RecomputedRoute = {
   name: MethodName;
@@ -10,30 +16,19 @@ export type RecomputedRoute = {
   recomputed: number | null;
 };
 
-/** The contract exactly as it was priced: its time to expiry is on record as a double. */
-const contractOf = ({ exercise, kind, strike, expiryYears }: Quote) =>
-  ({ payoff: 'vanilla', exercise, kind, strike: Number(strike), expiry: expiryYears }) as const;
-
-/** Prices a stored quote again in this browser, from the inputs and settings on record. */
-export function useRecompute(quote: Quote) {
+/** Prices a stored price again in this browser, from the inputs and settings on record. */
+export function useRecompute({ contract, market, routes }: StoredPrice) {
   return useMutation({
     networkMode: 'always',
     mutationFn: async (): Promise<RecomputedRoute[]> => {
-      const recorded = quote.routes.flatMap(({ name, result }) =>
-        result.ok ? [{ name, result }] : [],
-      );
-      const again = await pricingThread().ask({
-        kind: 'reprice',
-        contract: contractOf(quote),
-        market: quote.market,
-        methods: recorded.map(({ result }) => result.method),
-      });
-      return recorded.map(({ name, result }, index) => {
-        const { result: recomputed } = again[index];
+      const methods = routes.map(({ method }) => method);
+      const again = await pricingThread().ask({ kind: 'reprice', contract, market, methods });
+      return routes.map(({ method, value }, index) => {
+        const { result } = again[index];
         return {
-          name,
-          recorded: result.value,
-          recomputed: recomputed.ok ? recomputed.value : null,
+          name: method.name,
+          recorded: value,
+          recomputed: result.ok ? result.value : null,
         };
       });
     },

@@ -2,8 +2,15 @@ import { useEffect, useRef } from 'react';
 import type { DeskAccess } from '@/shared/contracts/sessions';
 import type { QuoteDraft } from '@/shared/contracts/quotes';
 import type { Underlying } from '@/shared/contracts/underlyings';
+import { toleranceFor } from '@/shared/tolerance';
 import { hasNewerClose, type TicketDraft } from './ticket-draft';
-import { firstErrorField, placeIssues, readTicket, type FieldErrors } from './ticket-terms';
+import {
+  firstErrorField,
+  placeIssues,
+  readTicket,
+  type FieldErrors,
+  type TicketReading,
+} from './ticket-terms';
 import { useIndicativePrice } from './use-indicative-price';
 import { useMinute } from './use-minute';
 import { useQuoteSaving } from './use-quote-saving';
@@ -40,6 +47,16 @@ function useOpening(
   }, [quote, underlyings, dispatch, onTaken]);
 }
 
+/** The desk's tolerance for the size on the ticket; per unit alone while the size cannot be read. */
+function toleranceOn(
+  underlying: Underlying | null,
+  { quantity, contractSize }: TicketReading['position'],
+): number {
+  if (!underlying) return noTolerance;
+  if (quantity === undefined || contractSize === undefined) return underlying.tolerance;
+  return toleranceFor(underlying, { quantity, contractSize });
+}
+
 /** Everything that a ticket knows and can do. */
 export function useTicket(
   userId: string,
@@ -56,7 +73,7 @@ export function useTicket(
   const reading = readTicket(draft, underlying, desk, nowMs);
   const pricing = useIndicativePrice(
     underlying?.id ?? null,
-    underlying?.tolerance ?? noTolerance,
+    toleranceOn(underlying, reading.position),
     reading.priced?.request ?? null,
   );
   const saving = useQuoteSaving(userId, desk.id);

@@ -1,4 +1,5 @@
 import { Section } from '@/components/ui/card';
+import { FactList, type Fact } from '@/components/ui/fact-list';
 import { quotesText } from '@/constants/texts/quotes';
 import { ticketText } from '@/constants/texts/ticket';
 import type { Market } from '@/pricing/contract';
@@ -13,7 +14,6 @@ import {
 } from '@/shared/format/numbers';
 import { optionTerms } from '@/shared/format/terms';
 import { positionWords } from '@/components/price/answer-card';
-import { FactList, type Fact } from './fact-list';
 
 type FactsProps = { quote: Quote; desk: DeskAccess };
 

@@ -3,6 +3,7 @@ import { AnswerCard } from '@/components/price/answer-card';
 import { CautionsSection } from '@/components/price/cautions';
 import type { Evidence } from '@/components/price/evidence';
 import { GreeksSection } from '@/components/price/greeks-section';
+import { RecomputeSection } from '@/components/price/recompute-section';
 import { RoutesSection } from '@/components/price/routes-section';
 import { ActionBar } from '@/components/ui/action-bar';
 import { Button } from '@/components/ui/button';
@@ -17,9 +18,9 @@ import type { Quote } from '@/shared/contracts/quotes';
 import type { DeskAccess } from '@/shared/contracts/sessions';
 import { errorOf } from '@/hooks/error-of';
 import { useQuote } from '@/hooks/use-quotes';
+import type { StoredPrice } from '@/hooks/use-recompute';
 import { QuoteRecord, QuoteTermsSection } from './quote-facts';
 import { summaryTerms } from './quote-summary';
-import { RecomputeSection } from './recompute-section';
 
 export function QuoteScreen({ desk, quoteId }: { desk: DeskAccess; quoteId: string }) {
   const { data: quote, error, refetch } = useQuote(desk.id, quoteId);
@@ -47,31 +48,54 @@ const evidenceOf = (quote: Quote): Evidence => ({
   position: quote,
 });
 
+/** The contract exactly as it was priced: its time to expiry is on record as a double. */
+const storedPriceOf = ({ exercise, kind, strike, expiryYears, market, routes }: Quote) =>
+  ({
+    contract: { payoff: 'vanilla', exercise, kind, strike: Number(strike), expiry: expiryYears },
+    market,
+    routes: routes.flatMap(({ result }) => (result.ok ? [result] : [])),
+  }) satisfies StoredPrice;
+
+/** What this person may make of a quote: a ticket with its terms, or a trade. */
+function actsOf(quote: Quote, desk: DeskAccess) {
+  const acts = [
+    {
+      permission: 'price',
+      kind: 'secondary',
+      label: quotesText.useTerms,
+      href: `/desks/${desk.id}/ticket?from=${quote.id}`,
+    },
+    {
+      permission: 'propose-trades',
+      kind: 'primary',
+      label: quotesText.proposeTrade,
+      href: `/desks/${desk.id}/quotes/${quote.id}/propose`,
+    },
+  ] as const;
+  return acts
+    .filter(({ permission }) => desk.permissions.includes(permission))
+    .map(({ kind, label, href }) => (
+      <Button key={href} grow kind={kind} label={label} href={href} />
+    ));
+}
+
 /** One quote and everything that it rests on, from top to bottom. */
 function QuotePage({ desk, quote }: { desk: DeskAccess; quote: Quote }) {
   const evidence = evidenceOf(quote);
   const wide = useWide();
-  const termsButton = desk.permissions.includes('price') ? (
-    <Button
-      grow
-      kind="secondary"
-      label={quotesText.useTerms}
-      href={`/desks/${desk.id}/ticket?from=${quote.id}`}
-    />
-  ) : null;
+  const acts = actsOf(quote, desk);
   return (
     <Screen
       title={quotesText.quote(quote.number)}
       measure={1240}
       overline={<Link href={`/desks/${desk.id}/quotes`}>{quotesText.back}</Link>}
-      actions={wide ? termsButton : undefined}
+      actions={wide ? acts : undefined}
     >
       <Text tone="muted">{summaryTerms(quote)}</Text>
       <AnswerCard evidence={evidence} />
       <View style={styles.pair}>
         <View style={styles.half}>
           <RoutesSection evidence={evidence} />
-          <RecomputeSection quote={quote} />
         </View>
         <View style={styles.half}>
           <GreeksSection evidence={evidence} />
@@ -83,10 +107,11 @@ function QuotePage({ desk, quote }: { desk: DeskAccess; quote: Quote }) {
         </View>
         <View style={styles.half}>
           <QuoteRecord quote={quote} desk={desk} />
+          <RecomputeSection price={storedPriceOf(quote)} />
         </View>
       </View>
       <CautionsSection evidence={evidence} />
-      {wide || !termsButton ? null : <ActionBar>{termsButton}</ActionBar>}
+      {wide || acts.length === 0 ? null : <ActionBar>{acts}</ActionBar>}
     </Screen>
   );
 }

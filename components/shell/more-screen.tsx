@@ -17,14 +17,17 @@ import { ApiError } from '@/shared/api-client';
 import { apiBase } from '@/shared/endpoint';
 import { permissionSentence } from '@/shared/permissions';
 import { DeskList } from './desk-switch';
+import { Elsewhere } from './navigation';
 
 /** The account, the look, and what the figures mean. */
 export function MoreScreen() {
   const wide = useWide();
+  const desk = useDesk();
   return (
     <Screen title={moreText.title}>
       <View style={wide ? styles.columns : styles.column}>
         <View style={wide ? styles.half : styles.column}>
+          {wide ? null : <Elsewhere desk={desk} />}
           <Account />
           <Desks />
           <Look />

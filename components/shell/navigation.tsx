@@ -1,5 +1,6 @@
 import { usePathname } from 'expo-router';
 import type { ReactNode } from 'react';
+import { Section } from '@/components/ui/card';
 import { Icon, Mark, type IconName } from '@/components/ui/icon';
 import { Link } from '@/components/ui/link';
 import { shellText } from '@/constants/texts/shell';
@@ -8,9 +9,14 @@ import type { Permission } from '@/shared/permissions';
 
 type Item = { name: keyof typeof shellText.items; icon: IconName; permission: Permission | null };
 
-const items: readonly Item[] = [
+const allItems: readonly Item[] = [
   { name: 'ticket', icon: 'ticket', permission: 'price' },
   { name: 'quotes', icon: 'quotes', permission: 'read-desk' },
+  { name: 'books', icon: 'books', permission: 'read-desk' },
+  { name: 'market-data', icon: 'market-data', permission: 'read-desk' },
+  { name: 'policies', icon: 'policies', permission: 'read-desk' },
+  { name: 'history', icon: 'history', permission: 'read-desk' },
+  { name: 'chain', icon: 'chain', permission: 'export-history' },
   { name: 'people', icon: 'people', permission: 'read-desk' },
   { name: 'changes', icon: 'changes', permission: 'read-audit-log' },
   { name: 'more', icon: 'more', permission: null },
@@ -18,21 +24,40 @@ const items: readonly Item[] = [
 
 /** What this person may open on this desk, in the order of the day. */
 const itemsFor = ({ permissions, suspended }: DeskAccess) =>
-  items.filter(
+  allItems.filter(
     ({ permission }) => permission === null || (!suspended && permissions.includes(permission)),
   );
 
 /** The section of a desk's address: `/desks/<id>/quotes/<quote>` is in `quotes`. */
 export const sectionOf = (pathname: string): string => pathname.split('/')[3] ?? '';
 
-function Items({ desk, className }: { desk: DeskAccess; className: string }) {
+/** A phone has room for five: the first four, and the page that leads to the rest. */
+const barLength = 5;
+
+const isInBar = (index: number, count: number) =>
+  count <= barLength || index < barLength - 1 || index === count - 1;
+
+const barItems = (desk: DeskAccess) =>
+  itemsFor(desk).filter((_, index, all) => isInBar(index, all.length));
+
+/** What the bar has no room for; the page behind its last item lists it. */
+const overflowItems = (desk: DeskAccess) =>
+  itemsFor(desk).filter((_, index, all) => !isInBar(index, all.length));
+
+/** A trade is reached from its book. */
+const isCurrent = (name: Item['name'], section: string) =>
+  section === name || (name === 'books' && section === 'trades');
+
+type ItemsProps = { desk: DeskAccess; items: readonly Item[]; className: string };
+
+function Items({ desk, items, className }: ItemsProps) {
   const section = sectionOf(usePathname());
-  return itemsFor(desk).map(({ name, icon }) => (
+  return items.map(({ name, icon }) => (
     <Link
       key={name}
       href={`/desks/${desk.id}/${name}`}
       className={className}
-      current={section === name}
+      current={isCurrent(name, section)}
     >
       <Icon name={icon} />
       <span>{shellText.items[name]}</span>
@@ -43,7 +68,7 @@ function Items({ desk, className }: { desk: DeskAccess; className: string }) {
 export function BottomBar({ desk }: { desk: DeskAccess }) {
   return (
     <nav className="bottom-bar" aria-label={shellText.navigation}>
-      <Items desk={desk} className="bottom-item" />
+      <Items desk={desk} items={barItems(desk)} className="bottom-item" />
     </nav>
   );
 }
@@ -55,8 +80,23 @@ export function Rail({ desk, foot }: { desk: DeskAccess; foot: ReactNode }) {
         <Mark />
         <span>{shellText.product}</span>
       </Link>
-      <Items desk={desk} className="rail-item" />
+      <Items desk={desk} items={itemsFor(desk)} className="rail-item" />
       <div className="rail-foot">{foot}</div>
+    </nav>
+  );
+}
+
+/** The pages of the desk that a phone's bar has no room for; nothing where it shows them all. */
+export function Elsewhere({ desk }: { desk: DeskAccess }) {
+  const items = overflowItems(desk);
+  if (items.length === 0) return null;
+  return (
+    <nav aria-label={shellText.elsewhere}>
+      <Section title={shellText.elsewhere}>
+        <div className="elsewhere">
+          <Items desk={desk} items={items} className="rail-item" />
+        </div>
+      </Section>
     </nav>
   );
 }

@@ -29,7 +29,7 @@ export function SaveNotices({ ticket, desk }: { ticket: Ticket; desk: DeskAccess
   if (outcome === null && ticket.kept) return null;
   return (
     <div ref={place} className="outcome">
-      {saved ? <SavedNotice saved={saved} deskId={desk.id} /> : null}
+      {saved ? <SavedNotice saved={saved} desk={desk} /> : null}
       {refused ? (
         <Notice
           tone="brick"
@@ -52,7 +52,7 @@ export function SaveNotices({ ticket, desk }: { ticket: Ticket; desk: DeskAccess
   );
 }
 
-function SavedNotice({ saved: { quote, sent }, deskId }: { saved: SavedQuote; deskId: string }) {
+function SavedNotice({ saved: { quote, sent }, desk }: { saved: SavedQuote; desk: DeskAccess }) {
   const same = Object.is(quote.value, sent.indicativeValue);
   const decimals = valueDecimals(quote.tolerance, quote.underlying.priceDecimals);
   const shown = (value: number) => formatQuantity(value, decimals, 17);
@@ -69,11 +69,19 @@ function SavedNotice({ saved: { quote, sent }, deskId }: { saved: SavedQuote; de
       title={ticketText.savedTitle(quote.number)}
       body={words}
       action={
-        <Button
-          kind="secondary"
-          label={ticketText.openQuote}
-          href={`/desks/${deskId}/quotes/${quote.id}`}
-        />
+        <View style={styles.acts}>
+          <Button
+            kind="secondary"
+            label={ticketText.openQuote}
+            href={`/desks/${desk.id}/quotes/${quote.id}`}
+          />
+          {desk.permissions.includes('propose-trades') ? (
+            <Button
+              label={ticketText.proposeTrade}
+              href={`/desks/${desk.id}/quotes/${quote.id}/propose`}
+            />
+          ) : null}
+        </View>
       }
     />
   );
@@ -125,5 +133,5 @@ function KeptLine({ quote, ticket, desk }: KeptLineProps) {
 const styles = StyleSheet.create({
   kept: { gap: space.sm },
   line: { gap: space.sm },
-  acts: { flexDirection: 'row', gap: space.sm },
+  acts: { flexDirection: 'row', flexWrap: 'wrap', gap: space.sm },
 });

@@ -31,7 +31,7 @@ export type DataTableProps<Row> = {
 };
 
 /** Up and down move between the rows' links, home and end jump. */
-function moveBetweenRows(event: KeyboardEvent<HTMLTableSectionElement>) {
+export function moveBetweenRows(event: KeyboardEvent<HTMLTableSectionElement>) {
   const links = Array.from(event.currentTarget.querySelectorAll<HTMLElement>('.table-row-link'));
   const at = links.findIndex((link) => link === document.activeElement);
   if (at < 0) return;
@@ -48,7 +48,7 @@ function moveBetweenRows(event: KeyboardEvent<HTMLTableSectionElement>) {
 }
 
 /** A click anywhere in a row follows its link, unless it met a control or selected some text. */
-function followRow(event: MouseEvent<HTMLTableRowElement>) {
+export function followRow(event: MouseEvent<HTMLTableRowElement>) {
   if (event.target instanceof Element && event.target.closest('a, button, input, select')) return;
   if (window.getSelection()?.isCollapsed === false) return;
   event.currentTarget.querySelector<HTMLElement>('.table-row-link')?.click();

@@ -23,6 +23,7 @@ export const quotesText = {
 
   quote: (number: string) => `Quote ${number}`,
   useTerms: 'Use these terms',
+  proposeTrade: 'Propose trade',
   back: 'All quotes',
   termsTitle: 'Terms and market',
   recordTitle: 'On record',
@@ -48,16 +49,4 @@ export const quotesText = {
   ticketShowed: 'The ticket showed',
   sameBits: (value: string) => `${value}, the same 64 bits`,
   otherBits: (value: string, difference: string) => `${value}, apart by ${difference}`,
-
-  recomputeTitle: 'Recompute here',
-  recomputeBody:
-    'Prices the stored inputs once more in this browser, by every route, and compares with what is on record.',
-  recompute: 'Recompute',
-  recomputing: 'Recomputing',
-  allSame: (count: number) =>
-    `Equal to the bit: ${count === 1 ? 'the one route' : `all ${count} routes`} gave the recorded value.`,
-  someDiffer: 'Not equal to the bit; the differences stand below.',
-  recomputed: 'recomputed',
-  difference: 'difference',
-  same: 'same bits',
 } as const;

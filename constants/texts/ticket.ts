@@ -114,6 +114,7 @@ export const ticketText = {
   sameBits: 'Priced again by the server: the same 64 bits.',
   otherBits: (server: string, ticket: string, difference: string) =>
     `The server’s own value is ${server}; the ticket showed ${ticket} (${difference}).`,
+  proposeTrade: 'Propose trade',
   openQuote: 'Open the quote',
   keptTitle: 'The quote is kept on this device',
   keptTitles: (count: number) => `${count} quotes are kept on this device`,

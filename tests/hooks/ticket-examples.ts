@@ -14,6 +14,7 @@ export const wheat: Underlying = {
   contractSize: '500.0000000000',
   priceDecimals: 2,
   tolerance: 0.001,
+  moneyTolerance: null,
   close: {
     snapshotId,
     date: '2026-11-30',
@@ -31,6 +32,7 @@ export const share: Underlying = {
   contractSize: '100',
   priceDecimals: 2,
   tolerance: 0.001,
+  moneyTolerance: null,
   close: {
     snapshotId,
     date: '2026-11-30',

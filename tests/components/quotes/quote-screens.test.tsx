@@ -4,6 +4,7 @@ import userEvent from '@testing-library/user-event';
 import { QuoteListScreen } from '@/components/quotes/quote-list-screen';
 import { QuoteScreen } from '@/components/quotes/quote-screen';
 import { quotesText } from '@/constants/texts/quotes';
+import { recomputeText } from '@/constants/texts/recompute';
 import type { Quote } from '@/shared/contracts/quotes';
 import { playDialogs, playWindow } from '../browser';
 import { quoteFor } from '../play-quotes';
@@ -104,8 +105,8 @@ describe('a quote’s page', () => {
   it('makes the stored numbers again, to the bit', async () => {
     playQuotes([quote]);
     inQueries(<QuoteScreen desk={desk} quoteId={quote.id} />);
-    await userEvent.click(await screen.findByRole('button', { name: quotesText.recompute }));
-    expect(await screen.findByText(quotesText.allSame(3))).toBeTruthy();
+    await userEvent.click(await screen.findByRole('button', { name: recomputeText.act }));
+    expect(await screen.findByText(recomputeText.allSame(3))).toBeTruthy();
   });
 
   it('shows a single altered bit', async () => {
@@ -115,15 +116,15 @@ describe('a quote’s page', () => {
     const stored = { ...quote, routes: [{ ...first, result: altered }, ...others] };
     playQuotes([stored]);
     inQueries(<QuoteScreen desk={desk} quoteId={quote.id} />);
-    await userEvent.click(await screen.findByRole('button', { name: quotesText.recompute }));
-    expect(await screen.findByText(quotesText.someDiffer)).toBeTruthy();
-    expect(screen.getAllByText(quotesText.same)).toHaveLength(2);
+    await userEvent.click(await screen.findByRole('button', { name: recomputeText.act }));
+    expect(await screen.findByText(recomputeText.someDiffer)).toBeTruthy();
+    expect(screen.getAllByText(recomputeText.same)).toHaveLength(2);
   });
 
   it('is not offered as a start of a ticket to those who may not price', async () => {
     playQuotes([quote]);
     inQueries(<QuoteScreen desk={{ ...desk, permissions: ['read-desk'] }} quoteId={quote.id} />);
-    await screen.findByRole('button', { name: quotesText.recompute });
+    await screen.findByRole('button', { name: recomputeText.act });
     expect(screen.queryByRole('link', { name: quotesText.useTerms })).toBeNull();
   });
 });

@@ -5,22 +5,21 @@ import { DataTable, type Column } from '@/components/ui/data-table';
 import { Notice } from '@/components/ui/notice';
 import { Text } from '@/components/ui/text';
 import { priceText, routeLabel } from '@/constants/texts/price';
-import { quotesText } from '@/constants/texts/quotes';
-import type { Quote } from '@/shared/contracts/quotes';
+import { recomputeText } from '@/constants/texts/recompute';
 import { formatDifference, formatQuantity } from '@/shared/format/numbers';
-import { useRecompute, type RecomputedRoute } from '@/hooks/use-recompute';
+import { useRecompute, type RecomputedRoute, type StoredPrice } from '@/hooks/use-recompute';
 
-/** Anyone who reads a quote can make its numbers again, and see whether they are the same. */
-export function RecomputeSection({ quote }: { quote: Quote }) {
-  const { mutate, isPending, error, data } = useRecompute(quote);
+/** Anyone who reads a stored price can make its numbers again, and see whether they are the same. */
+export function RecomputeSection({ price }: { price: StoredPrice }) {
+  const { mutate, isPending, error, data } = useRecompute(price);
   return (
-    <Section title={quotesText.recomputeTitle}>
-      <Text tone="muted">{quotesText.recomputeBody}</Text>
+    <Section title={recomputeText.title}>
+      <Text tone="muted">{recomputeText.body}</Text>
       {data ? <Outcome routes={data} /> : null}
       {error ? <Notice tone="brick" title={error.message} /> : null}
       <Button
         kind="secondary"
-        label={isPending ? quotesText.recomputing : quotesText.recompute}
+        label={isPending ? recomputeText.busy : recomputeText.act}
         busy={isPending}
         onPress={() => mutate()}
       />
@@ -36,11 +35,11 @@ function Outcome({ routes }: { routes: readonly RecomputedRoute[] }) {
     <>
       <Notice
         tone={same ? 'moss' : 'brick'}
-        title={same ? quotesText.allSame(routes.length) : quotesText.someDiffer}
+        title={same ? recomputeText.allSame(routes.length) : recomputeText.someDiffer}
       />
       <DataTable
         plain
-        caption={quotesText.recomputeTitle}
+        caption={recomputeText.title}
         columns={columns}
         rows={routes}
         rowId={({ name }) => name}
@@ -58,7 +57,9 @@ const recomputedText = ({ recomputed }: RecomputedRoute) =>
 
 function differenceText(route: RecomputedRoute): string {
   if (route.recomputed === null) return '';
-  return isSame(route) ? quotesText.same : formatDifference(route.recomputed - route.recorded, 6);
+  return isSame(route)
+    ? recomputeText.same
+    : formatDifference(route.recomputed - route.recorded, 6);
 }
 
 /** A route on a phone, where all its digits do not fit into a row. */
@@ -78,13 +79,13 @@ const columns: Column<RecomputedRoute>[] = [
   { id: 'route', header: priceText.route, cell: ({ name }) => routeLabel(name) },
   {
     id: 'recomputed',
-    header: quotesText.recomputed,
+    header: recomputeText.recomputed,
     align: 'end',
     cell: recomputedText,
   },
   {
     id: 'difference',
-    header: quotesText.difference,
+    header: recomputeText.difference,
     align: 'end',
     cell: differenceText,
   },

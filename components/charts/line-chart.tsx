@@ -1,0 +1,200 @@
+import { scaleLinear, scaleUtc } from 'd3-scale';
+import { line } from 'd3-shape';
+import { useState, type CSSProperties, type KeyboardEvent, type PointerEvent } from 'react';
+import { StyleSheet, View } from 'react-native';
+import { Text } from '@/components/ui/text';
+import { color, font, fontSize, space } from '@/constants/theme';
+
+export type LinePoint = {
+  /** Milliseconds since 1970 (UTC). */
+  at: number;
+  /** Null where there is none: the line is broken there. */
+  value: number | null;
+  /** Drawn as a square instead of a dot. */
+  marked: boolean;
+  /** What stands below the chart while the point is chosen. */
+  reading: string;
+};
+
+export type LineChartProps = {
+  /** Title with the unit. */
+  title: string;
+  /** Oldest first. */
+  points: readonly LinePoint[];
+  formatValue: (value: number) => string;
+  /** Word of the marked points in the legend. */
+  markedWord: string;
+};
+
+const height = 220;
+const margin = { top: 12, right: 12, bottom: 26, left: 76 };
+
+function scalesOf(points: readonly LinePoint[], width: number) {
+  const times = points.map(({ at }) => at);
+  const values = points.flatMap(({ value }) => (value === null ? [] : [value]));
+  const [low, high] = [Math.min(...values), Math.max(...values)];
+  // A line that does not move still needs an axis of some length.
+  const room = high > low ? 0 : Math.abs(low) * 0.01 || 1;
+  return {
+    x: scaleUtc()
+      .domain([Math.min(...times), Math.max(...times)])
+      .range([margin.left, width - margin.right]),
+    y: scaleLinear()
+      .domain([low - room, high + room])
+      .nice(4)
+      .range([height - margin.bottom, margin.top]),
+  };
+}
+
+type Scales = ReturnType<typeof scalesOf>;
+
+/** Values over time: a line to look along, with each point to be read by pointer or arrow keys. */
+export function LineChart({ title, points, formatValue, markedWord }: LineChartProps) {
+  const [width, setWidth] = useState(480);
+  const [chosen, setChosen] = useState<number | null>(null);
+  const scales = scalesOf(points, width);
+  const last = points.length - 1;
+  const onKeyDown = (event: KeyboardEvent) => {
+    const from = chosen ?? last;
+    const targets: Record<string, number> = {
+      ArrowLeft: Math.max(0, from - 1),
+      ArrowRight: Math.min(last, from + 1),
+      Home: 0,
+      End: last,
+    };
+    const target = targets[event.key];
+    if (target === undefined) return;
+    event.preventDefault();
+    setChosen(target);
+  };
+  const onPointerMove = (event: PointerEvent<HTMLDivElement>) => {
+    const x = event.clientX - event.currentTarget.getBoundingClientRect().left;
+    setChosen(nearestTo(x, points, scales));
+  };
+  return (
+    <View style={styles.chart} onLayout={({ nativeEvent }) => setWidth(nativeEvent.layout.width)}>
+      <Text size="small" tone="muted">
+        {title}
+      </Text>
+      <div
+        style={areaStyle}
+        role="application"
+        tabIndex={0}
+        aria-label={title}
+        onKeyDown={onKeyDown}
+        onFocus={() => setChosen(chosen ?? last)}
+        onPointerMove={onPointerMove}
+        onPointerDown={onPointerMove}
+      >
+        <Drawing {...{ points, scales, width, formatValue, chosen }} />
+      </div>
+      <View style={styles.foot}>
+        <Text size="small" tabular aria-live="polite">
+          {points[chosen ?? last]?.reading}
+        </Text>
+        {points.some(({ marked }) => marked) ? (
+          <View style={styles.legend}>
+            <svg width={10} height={10} aria-hidden>
+              <rect x={1} y={1} width={8} height={8} fill={color.brick} />
+            </svg>
+            <Text size="small" tone="muted">
+              {markedWord}
+            </Text>
+          </View>
+        ) : null}
+      </View>
+    </View>
+  );
+}
+
+/** The index of the point whose place is nearest to a place on the axis. */
+function nearestTo(x: number, points: readonly LinePoint[], scales: Scales): number {
+  const distance = (index: number) => Math.abs(scales.x(points[index].at) - x);
+  return points.reduce((best, _, index) => (distance(index) < distance(best) ? index : best), 0);
+}
+
+type DrawingProps = Pick<LineChartProps, 'points' | 'formatValue'> & {
+  scales: Scales;
+  width: number;
+  chosen: number | null;
+};
+
+const day = (at: Date) => at.toISOString().slice(0, 10);
+
+function Drawing({ points, scales: { x, y }, width, formatValue, chosen }: DrawingProps) {
+  const path = line<LinePoint>()
+    .defined(({ value }) => value !== null)
+    .x(({ at }) => x(at))
+    .y(({ value }) => y(value ?? 0))([...points]);
+  const times = x.ticks(Math.max(2, Math.floor(width / 160)));
+  return (
+    <svg width={width} height={height} aria-hidden>
+      {y.ticks(4).map((tick) => (
+        <line
+          key={tick}
+          x1={margin.left}
+          x2={width - margin.right}
+          y1={y(tick)}
+          y2={y(tick)}
+          stroke={color.line}
+        />
+      ))}
+      {y.ticks(4).map((tick) => (
+        <Label key={tick} x={margin.left - 8} y={y(tick) + 4} anchor="end">
+          {formatValue(tick)}
+        </Label>
+      ))}
+      {times.map((tick) => (
+        <Label key={tick.getTime()} x={x(tick)} y={height - 8} anchor="middle">
+          {day(tick)}
+        </Label>
+      ))}
+      {chosen === null ? null : (
+        <line
+          x1={x(points[chosen].at)}
+          x2={x(points[chosen].at)}
+          y1={margin.top}
+          y2={height - margin.bottom}
+          stroke={color.edge}
+        />
+      )}
+      <path d={path ?? ''} stroke={color.lake} strokeWidth={1.75} fill="none" />
+      {points.map((point, index) => (
+        <Point key={`${point.at} ${index}`} point={point} x={x(point.at)} y={y} />
+      ))}
+    </svg>
+  );
+}
+
+type LabelProps = { x: number; y: number; anchor: 'end' | 'middle'; children: string };
+
+function Label({ x, y, anchor, children }: LabelProps) {
+  return (
+    <text
+      x={x}
+      y={y}
+      textAnchor={anchor}
+      fill={color.muted}
+      fontFamily={font.text}
+      fontSize={fontSize.small}
+    >
+      {children}
+    </text>
+  );
+}
+
+/** A value that is missing is marked on the axis itself. */
+function Point({ point, x, y }: { point: LinePoint; x: number; y: Scales['y'] }) {
+  const at = point.value === null ? height - margin.bottom : y(point.value);
+  if (point.marked) return <rect x={x - 4} y={at - 4} width={8} height={8} fill={color.brick} />;
+  return <circle cx={x} cy={at} r={2.5} fill={color.lake} />;
+}
+
+/** A finger still scrolls the page up and down; sideways it reads along the line. */
+const areaStyle: CSSProperties = { touchAction: 'pan-y' };
+
+const styles = StyleSheet.create({
+  chart: { gap: space.xs, width: '100%' },
+  foot: { flexDirection: 'row', flexWrap: 'wrap', justifyContent: 'space-between', gap: space.md },
+  legend: { flexDirection: 'row', alignItems: 'center', gap: space.xs },
+});

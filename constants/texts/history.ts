@@ -1,0 +1,172 @@
+/** Words of the history, of one stored value, of the chain's page and of exports. */
+import type { BreakKind } from '@/shared/contracts/chain';
+import type { RecordKind } from '@/shared/contracts/chain-bodies';
+
+export const historyText = {
+  title: 'History',
+  subtitle: 'Every stored value, as it was sealed',
+  caption: 'Stored values, newest valuation first',
+  valued: 'valued',
+  trade: 'trade',
+  terms: 'terms',
+  value: 'value',
+  error: '±',
+  agreement: 'agreement',
+  book: 'book',
+  run: 'run',
+  noValue: 'no value',
+  showMore: 'Show more',
+  tradeField: 'Trade',
+  tradeHint: 'Number, such as T-0012',
+  runField: 'Run',
+  runHint: 'Number of the run',
+  underlyingField: 'Underlying',
+  anyUnderlying: 'any underlying',
+  verdictField: 'Verdict',
+  anyVerdict: 'any verdict',
+  from: 'From',
+  to: 'To',
+  onlyBook: (code: string) => `Book ${code} only`,
+  clear: 'Clear the filters',
+  emptyTitle: 'Nothing is stored yet',
+  emptyBody: 'Each valuation run leaves its values here, sealed one to the next.',
+  nothingFoundTitle: 'No value fits',
+  nothingFoundBody: 'Nothing on this desk fits all of these filters.',
+  checkChain: 'Verify the chain',
+  linesOf: (trade: string) => `Values of ${trade} over time`,
+  lineAxis: (currency: string, unit: string) => `${currency} per ${unit}`,
+  exception: 'exception',
+  showAsTable: 'Show as table',
+  showAsLine: 'Show as line',
+
+  exportTitle: 'Export what is filtered',
+  exportBody:
+    'The file comes with a signed manifest: whoever has the public key can tell later whether a single digit was changed.',
+  exportCsv: 'Export CSV',
+  exportXlsx: 'Export XLSX',
+  exportProgress: (done: number, total: number) => `Writing: ${done} of ${total} values`,
+  exportReady: (fileName: string, rows: number) => `${fileName}, ${rows} values`,
+  saveFile: 'Save the file',
+  saveManifest: 'Save the manifest',
+  exportBackground: 'It goes on when this page is closed; exports are listed with the chain.',
+} as const;
+
+export const valueText = {
+  title: (trade: string, day: string) => `${trade} as of ${day}`,
+  back: 'All values',
+  ofTrade: (trade: string) => `All values of ${trade}`,
+  failed: 'The primary route gave no value',
+  inputsTitle: 'What it was valued from',
+  sealTitle: 'How it is sealed',
+  recordsTitle: 'Approvals and records',
+  noRecords: 'Nothing is on record about this trade, run, market data or policy.',
+  option: 'Option',
+  underlying: 'Underlying',
+  spot: 'Spot',
+  futuresPrice: 'Futures price',
+  volatility: 'Volatility',
+  rate: 'Rate',
+  yield: 'Yield or foreign rate',
+  years: 'Time to expiry',
+  yearsOf: (years: string) => `${years} years, ACT/365 Fixed`,
+  valuedAt: 'Valued as of',
+  tolerance: 'Tolerance',
+  engine: 'Engine',
+  book: 'Book',
+  run: 'Run',
+  snapshot: 'Market data',
+  policy: 'Pricing policy',
+  tradeVersion: 'Trade version',
+  settings: (route: string) => `Settings, ${route}`,
+  before: 'Value before',
+  noneBefore: 'this is the first one',
+  position: 'Position in the chain',
+  sealedAt: 'Sealed at',
+  hash: 'Hash',
+  previous: 'Hash before it',
+  when: 'at',
+  what: 'record',
+  who: 'by',
+  why: 'reason',
+} as const;
+
+export const recordKindWords: Record<RecordKind, string> = {
+  'trade-event': 'trade',
+  approval: 'approval',
+  'sign-off': 'sign-off',
+  'permission-change': 'permission',
+  'market-data': 'market data',
+  policy: 'policy',
+  override: 'override',
+  study: 'study',
+};
+
+export const chainText = {
+  title: 'Chain',
+  subtitle: 'Each entry carries the hash of the one before; what is changed afterwards shows',
+  kinds: { valuations: 'Valuations', records: 'Records' },
+  entries: (count: number) => (count === 1 ? '1 entry' : `${count} entries`),
+  empty: 'Nothing is sealed here yet.',
+  newest: 'Newest entry',
+  head: 'Hash of the head',
+  verify: 'Verify from the first entry',
+  verifying: 'Verifying',
+  progress: (checked: number, total: number) => `${checked} of ${total} entries are in order`,
+  queued: 'Waiting for a worker',
+  whole: (total: number) =>
+    total === 1 ? 'The one entry is in order' : `All ${total} entries are in order`,
+  wholeBody: (anchors: number) =>
+    anchors === 0
+      ? 'No head has been signed yet, so that a chain rewritten as a whole would not show.'
+      : `Compared with ${anchors === 1 ? 'one signed head' : `${anchors} signed heads`}.`,
+  heldFits: (position: number) => `Position ${position} has the hash that you kept.`,
+  broken: (position: number) => `The chain is broken at position ${position}`,
+  brokenBody: (checked: number) =>
+    checked === 0
+      ? 'No entry before it could be confirmed.'
+      : `The ${checked === 1 ? 'entry' : `${checked} entries`} before it are in order.`,
+  lastVerified: (when: string, who: string) => `Verified ${when} by ${who}`,
+  held: 'Compare with a manifest',
+  heldBody:
+    'A manifest that you kept holds a place of the chain and its hash, out of reach of whoever could change the database.',
+  heldChosen: (position: number) => `Position ${position}, from the manifest`,
+  heldUnreadable: 'This file is no manifest of an export. Choose the JSON file that came with one.',
+  heldForget: 'Leave it out',
+  anchorsTitle: 'Signed heads',
+  anchorsCaption: 'Heads that were signed, newest first',
+  noAnchors: 'Heads are signed at each sign-off and export.',
+  anchorPosition: 'position',
+  anchorPurpose: 'signed for',
+  purposes: { 'sign-off': 'sign-off', export: 'export' },
+  anchorAt: 'at',
+  anchorHash: 'hash',
+  keyTitle: 'Public key',
+  keyBody:
+    'Keep a copy outside of this service. With it, npm run verify tells, without a network, whether a file and its manifest are as they were signed.',
+  keyId: 'Key',
+  saveKey: 'Save the public key',
+  exportsTitle: 'Exports',
+  exportsCaption: 'Files made of the history, newest first',
+  noExports: 'No file has been made of the history yet.',
+  exportFile: 'file',
+  exportRows: 'values',
+  exportBy: 'by',
+  exportAt: 'at',
+  exportWriting: (done: number, total: number) => `writing, ${done} of ${total}`,
+} as const;
+
+/** What each kind of break says about what was done. */
+export const breakSentences: Record<BreakKind, string> = {
+  missing: 'An entry is missing here.',
+  previous:
+    'The entry does not carry the hash of the one before: one of the two was changed, removed or moved.',
+  hash: 'The entry does not fit its own hash: its text was changed after it was sealed.',
+  time: 'The entry is older than the one before it.',
+  head: 'The head of the chain does not fit its last entry.',
+  cut: 'A head was signed beyond the end of the chain: entries were cut off.',
+  'anchor-hash':
+    'The entry is not the one whose hash was signed: the chain was rewritten here or before.',
+  'held-hash':
+    'The entry does not have the hash that you kept: the chain was rewritten here or before.',
+  signature: 'The signature of a head does not fit: the signed head itself was changed.',
+};
