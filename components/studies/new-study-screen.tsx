@@ -1,0 +1,197 @@
+import { useState } from 'react';
+import { StyleSheet, View } from 'react-native';
+import { TermsForm } from '@/components/ticket/terms-form';
+import { Button } from '@/components/ui/button';
+import { Section } from '@/components/ui/card';
+import { Link } from '@/components/ui/link';
+import { Notice } from '@/components/ui/notice';
+import { Screen } from '@/components/ui/screen';
+import { SelectField } from '@/components/ui/select-field';
+import { ErrorState, SkeletonRows } from '@/components/ui/states';
+import { Text } from '@/components/ui/text';
+import { routeLabel } from '@/constants/texts/price';
+import { newStudyText, studiesText } from '@/constants/texts/studies';
+import { space } from '@/constants/theme';
+import { methodNames, type MethodName, type PricedExercise } from '@/pricing/contract';
+import { studyRows, type StudyDraft } from '@/shared/contracts/studies';
+import type { DeskAccess } from '@/shared/contracts/sessions';
+import { optionTerms } from '@/shared/format/terms';
+import { ApiError } from '@/shared/api-client';
+import { errorOf } from '@/hooks/error-of';
+import { useQuote } from '@/hooks/use-quotes';
+import { useStartStudy } from '@/hooks/use-studies';
+import { useTicket } from '@/hooks/use-ticket';
+
+export type NewStudyScreenProps = {
+  desk: DeskAccess;
+  userId: string;
+  quoteId: string | null;
+  onStarted: (studyId: string) => void;
+};
+
+type Source = StudyDraft['source'];
+
+export function NewStudyScreen({ desk, userId, quoteId, onStarted }: NewStudyScreenProps) {
+  return (
+    <Screen
+      title={newStudyText.title}
+      measure={860}
+      overline={<Link href={`/desks/${desk.id}/studies`}>{studiesText.back}</Link>}
+    >
+      {quoteId === null ? (
+        <OfFreeTerms desk={desk} userId={userId} onStarted={onStarted} />
+      ) : (
+        <OfQuote desk={desk} quoteId={quoteId} onStarted={onStarted} />
+      )}
+    </Screen>
+  );
+}
+
+type Start = Pick<NewStudyScreenProps, 'desk' | 'onStarted'>;
+
+function OfQuote({ desk, quoteId, onStarted }: Start & { quoteId: string }) {
+  const { data: quote, error, refetch } = useQuote(desk.id, quoteId);
+  if (error) return <ErrorState {...errorOf(error)} onRetry={() => void refetch()} />;
+  if (!quote) return <SkeletonRows rows={4} height={60} />;
+  return (
+    <>
+      <Section title={newStudyText.termsTitle}>
+        <Link href={`/desks/${desk.id}/quotes/${quote.id}`}>
+          {newStudyText.ofQuote(quote.number)}
+        </Link>
+        <Text>{`${quote.underlying.name} ${optionTerms(quote, quote.underlying.priceDecimals)}`}</Text>
+      </Section>
+      <Ladders
+        desk={desk}
+        source={{ kind: 'quote', quoteId }}
+        exercise={quote.exercise}
+        onStarted={onStarted}
+      />
+    </>
+  );
+}
+
+const nothingTaken = () => undefined;
+
+function OfFreeTerms({ desk, userId, onStarted }: Start & { userId: string }) {
+  const ticket = useTicket(userId, desk, null, nothingTaken);
+  const { underlying, underlyings, reading } = ticket;
+  if (underlyings.isError)
+    return (
+      <ErrorState {...errorOf(underlyings.error)} onRetry={() => void underlyings.refetch()} />
+    );
+  if (!underlying) return <SkeletonRows rows={6} height={60} />;
+  return (
+    <>
+      <Section title={newStudyText.termsTitle}>
+        <Text size="small" tone="muted">
+          {newStudyText.freeNote}
+        </Text>
+        <TermsForm ticket={ticket} underlying={underlying} />
+      </Section>
+      <Ladders
+        desk={desk}
+        source={reading.priced ? freeSource(reading.priced.terms) : null}
+        exercise={ticket.draft.exercise}
+        onStarted={onStarted}
+      />
+    </>
+  );
+}
+
+type PricedTerms = NonNullable<ReturnType<typeof useTicket>['reading']['priced']>['terms'];
+
+/** The terms of a ticket without its position. */
+function freeSource(terms: PricedTerms): Source {
+  const { underlyingId, kind, exercise, strike, expiryDate, market, pricedAt } = terms;
+  return {
+    kind: 'free',
+    terms: { underlyingId, kind, exercise, strike, expiryDate, market, pricedAt },
+  };
+}
+
+const refinable = methodNames.filter((name) => name !== 'closed-form');
+const first: readonly MethodName[] = ['heat-crank-nicolson'];
+const rowChoices = Array.from({ length: studyRows.max - studyRows.min + 1 }, (_, i) =>
+  String(studyRows.min + i),
+);
+
+/** American walks and grids take longer: one row fewer is as telling. */
+const usualRows: Record<PricedExercise, string> = { european: '6', american: '5' };
+
+type LaddersProps = Start & { source: Source | null; exercise: PricedExercise };
+
+function Ladders({ desk, source, exercise, onStarted }: LaddersProps) {
+  const [chosen, setChosen] = useState(first);
+  const [rows, setRows] = useState<string | null>(null);
+  const [idempotencyKey, setKey] = useState(() => crypto.randomUUID());
+  const start = useStartStudy(desk.id);
+  const length = rows ?? usualRows[exercise];
+  const submit = () => {
+    if (source === null || chosen.length === 0) return;
+    const ladders = chosen.map((name) => ({ name, rows: Number(length) }));
+    start.mutate(
+      { idempotencyKey, body: { source, ladders } },
+      {
+        onSuccess: ({ id }) => onStarted(id),
+        // The server has answered: what is sent next is another request.
+        onError: (error) => {
+          if (error instanceof ApiError && !error.retryable) setKey(crypto.randomUUID());
+        },
+      },
+    );
+  };
+  const toggle = (name: MethodName) =>
+    setChosen(
+      refinable.filter((other) =>
+        other === name ? !chosen.includes(name) : chosen.includes(other),
+      ),
+    );
+  return (
+    <Section title={newStudyText.methodsTitle}>
+      <View role="group" aria-label={newStudyText.methodsTitle} style={styles.methods}>
+        {refinable.map((name) => (
+          <label key={name} className="pill">
+            <input
+              className="visually-hidden"
+              type="checkbox"
+              checked={chosen.includes(name)}
+              onChange={() => toggle(name)}
+            />
+            {routeLabel(name)}
+          </label>
+        ))}
+      </View>
+      <Text size="small" tone="muted">
+        {newStudyText.methodsNote}
+      </Text>
+      <View style={styles.rows}>
+        <SelectField
+          label={newStudyText.rows}
+          hint={newStudyText.rowsHint}
+          value={length}
+          options={rowChoices.map((value) => ({ value, label: value }))}
+          onChange={setRows}
+        />
+      </View>
+      {chosen.length === 0 ? <Text tone="brick">{newStudyText.chooseMethod}</Text> : null}
+      {start.isError ? <Refusal error={start.error} /> : null}
+      <Button
+        label={start.isPending ? newStudyText.starting : newStudyText.act}
+        busy={start.isPending}
+        disabled={source === null || chosen.length === 0}
+        onPress={submit}
+      />
+    </Section>
+  );
+}
+
+function Refusal({ error }: { error: Error }) {
+  const sentences = error instanceof ApiError ? error.issues.map(({ message }) => message) : [];
+  return <Notice tone="brick" title={error.message} body={sentences.join(' ')} />;
+}
+
+const styles = StyleSheet.create({
+  methods: { flexDirection: 'row', flexWrap: 'wrap', columnGap: space.sm, rowGap: space.lg },
+  rows: { maxWidth: 320 },
+});
