@@ -1,6 +1,7 @@
 import { useInfiniteQuery, useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { endpoints } from '@/shared/contracts';
-import type { Study, StudyDraft, StudyStatus } from '@/shared/contracts/studies';
+import { maximumPageSize } from '@/shared/contracts/common';
+import type { Study, StudyDraft, StudyStatus, StudySummary } from '@/shared/contracts/studies';
 import { call } from './api';
 import { saveText } from './save-file';
 
@@ -26,6 +27,36 @@ export function useStudies(deskId: string, status: StudyStatus | null) {
       }),
     getNextPageParam: (page) => page.nextCursor ?? undefined,
     select: ({ pages }) => pages.flatMap(({ items }) => items),
+  });
+}
+
+type StudiedTerms = Pick<StudySummary, 'kind' | 'exercise' | 'strike' | 'expiryDate'> & {
+  underlyingId: string;
+};
+
+const isOf = (terms: StudiedTerms) => (study: StudySummary) =>
+  study.underlying.id === terms.underlyingId &&
+  study.kind === terms.kind &&
+  study.exercise === terms.exercise &&
+  Number(study.strike) === Number(terms.strike) &&
+  study.expiryDate === terms.expiryDate;
+
+/** Studies of these terms that have come to an end, those signed off before others. */
+export function useStudiesOfTerms(deskId: string, terms: StudiedTerms) {
+  return useQuery({
+    queryKey: [...listKey(deskId), 'of-terms', terms],
+    queryFn: async ({ signal }) => {
+      const pages = await Promise.all(
+        (['signed-off', 'finished'] as const).map((status) =>
+          call(endpoints.listStudies, {
+            params: { deskId },
+            query: { status, limit: maximumPageSize },
+            signal,
+          }),
+        ),
+      );
+      return pages.flatMap(({ items }) => items).filter(isOf(terms));
+    },
   });
 }
 

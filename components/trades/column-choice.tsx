@@ -3,22 +3,16 @@ import { Button } from '@/components/ui/button';
 import { Dialog } from '@/components/ui/dialog';
 import { booksText } from '@/constants/texts/books';
 import { uiText } from '@/constants/texts/ui';
-import type { TradeSort } from '@/shared/contracts/trades';
 
-/** Columns that may be hidden; the first one names its row. */
-const optionalColumns = [
-  ['underlying', booksText.terms],
-  ['expiry', booksText.expiry],
-  ['value', booksText.value],
-  ['agreement', booksText.agreement],
-  ['change', booksText.change],
-  ['total', booksText.total],
-] as const satisfies readonly (readonly [TradeSort | 'agreement', string])[];
-
-export type ColumnChoiceProps = { hidden: readonly string[]; toggle: (id: string) => void };
+export type ColumnChoiceProps = {
+  /** Those that may be hidden, with their headings; the first of a table names its row and stays. */
+  columns: readonly (readonly [id: string, heading: string])[];
+  hidden: readonly string[];
+  toggle: (id: string) => void;
+};
 
 /** Which columns of the table are shown. */
-export function ColumnChoice({ hidden, toggle }: ColumnChoiceProps) {
+export function ColumnChoice({ columns, hidden, toggle }: ColumnChoiceProps) {
   const [open, setOpen] = useState(false);
   const close = () => setOpen(false);
   return (
@@ -31,7 +25,7 @@ export function ColumnChoice({ hidden, toggle }: ColumnChoiceProps) {
         actions={<Button label={uiText.close} onPress={close} />}
       >
         <div className="pills">
-          {optionalColumns.map(([id, label]) => (
+          {columns.map(([id, label]) => (
             <label key={id} className="pill">
               <input
                 className="visually-hidden"

@@ -7,7 +7,7 @@ import { useWide } from '@/components/ui/use-wide';
 import { booksText } from '@/constants/texts/books';
 import { space } from '@/constants/theme';
 import type { DeskAccess } from '@/shared/contracts/sessions';
-import type { TradeSummary } from '@/shared/contracts/trades';
+import type { TradeSort, TradeSummary } from '@/shared/contracts/trades';
 import { errorOf } from '@/hooks/error-of';
 import { useHiddenColumns } from '@/hooks/use-hidden-columns';
 import { useTrades, type TradeFilter } from '@/hooks/use-trades';
@@ -17,6 +17,15 @@ import { TradeFilters } from './trade-filters';
 
 /** Loaded only where there is room for it: a phone shows cards. */
 const TradeTable = lazy(async () => ({ default: (await import('./trade-table')).TradeTable }));
+
+const optionalColumns = [
+  ['underlying', booksText.terms],
+  ['expiry', booksText.expiry],
+  ['value', booksText.value],
+  ['agreement', booksText.agreement],
+  ['change', booksText.change],
+  ['total', booksText.total],
+] as const satisfies readonly (readonly [TradeSort | 'agreement', string])[];
 
 export type TradeListProps = {
   desk: DeskAccess;
@@ -37,7 +46,7 @@ export function TradeList(props: TradeListProps) {
       <TradeRows {...props} hidden={columns.hidden} />
       {wide ? (
         <View style={styles.foot}>
-          <ColumnChoice {...columns} />
+          <ColumnChoice columns={optionalColumns} {...columns} />
         </View>
       ) : null}
     </>
