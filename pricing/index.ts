@@ -15,7 +15,7 @@ import { solveImpliedVolatility } from '@/pricing/implied/implied-volatility';
 import type { Solved } from '@/pricing/implied/solved';
 import { solveStrikeForDelta } from '@/pricing/implied/strike-for-delta';
 import { methodNamed, methods, methodsFor } from '@/pricing/registry';
-import { priceWithin } from '@/pricing/tolerance';
+import { priceRefined, priceWithin } from '@/pricing/tolerance';
 import { judgeRoutes, type ComparedRoute, type RouteVerdict } from '@/pricing/verdict';
 
 export { checkRequest } from '@/pricing/contract';
@@ -57,6 +57,18 @@ export function priceRoutes(contract: Contract, market: Market): PricedRoute[] {
     name,
     result: price({ contract, market, method: { name } }),
   }));
+}
+
+/** One route, as fine as its own estimate needs to be to hold the tolerance. */
+export function priceRouteWithin(
+  contract: Contract,
+  market: Market,
+  name: MethodName,
+  tolerance: number,
+): PricingResult {
+  const checked = checkRequest({ contract, market, method: { tolerance } });
+  if (!checked.ok) return { ok: false, ...checked.issues[0] };
+  return priceRefined(contract, market, tolerance, methodNamed(name));
 }
 
 /** The verdict over the routes that gave a price; `tolerance` in the unit of the values. */

@@ -32,6 +32,31 @@ export function priceWithin(
   };
 }
 
+/** How many times as long as with its usual sizes one route may work before it stops to refine. */
+const longestWork = 16;
+
+/**
+ * One route, refined until its own estimate holds the tolerance. Where it does not within its
+ * longest work, the finest that was reached: its estimate says how far that is.
+ */
+export function priceRefined(
+  contract: Contract,
+  market: Market,
+  tolerance: number,
+  method: Method,
+): PricingResult {
+  const limit = longestWork * method.work(method.defaultSettings);
+  let finest: PricingResult | null = null;
+  for (const { settings, work } of candidatesOf(method)) {
+    if (finest !== null && work > limit) break;
+    const result = method.price(contract, market, settings);
+    if (result.ok || finest === null || !finest.ok) finest = result;
+    if (result.ok && result.errorEstimate !== null && result.errorEstimate <= tolerance) break;
+  }
+  if (finest === null) throw new Error(`${method.name} has no coarsest settings`);
+  return finest;
+}
+
 function candidatesOf(method: Method): Candidate[] {
   const candidates: Candidate[] = [];
   let settings: MethodSizes | null = method.coarsestSettings;

@@ -9,6 +9,8 @@ import { migrate } from './migrate';
 import { closeExportThreads } from './services/export-file';
 import { closePasswordThreads, hashOfNobody } from './services/passwords';
 import { closePricingThreads } from './services/pricing';
+import { closeValuationThreads } from './services/run-threads';
+import { closeStudyThreads } from './services/study-threads';
 import { close, listen } from './web';
 import { startWorker, type Worker } from './worker';
 
@@ -57,7 +59,13 @@ async function stop(cause: string) {
   setTimeout(() => process.exit(1), stopLimitMs).unref();
   if (server) await close(server);
   if (worker) await worker.stop();
-  await Promise.all([closePasswordThreads(), closePricingThreads(), closeExportThreads()]);
+  await Promise.all([
+    closePasswordThreads(),
+    closePricingThreads(),
+    closeExportThreads(),
+    closeStudyThreads(),
+    closeValuationThreads(),
+  ]);
   await sequelize.close();
   process.exit(0);
 }

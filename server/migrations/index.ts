@@ -7,6 +7,7 @@ import { trades } from './0011-trades';
 import { marketData } from './0012-market-data';
 import { studies } from './0014-studies';
 import { exportFiles } from './0015-exports';
+import { runs } from './0016-runs';
 import type { Migration } from './migration';
 
 /** Every migration, oldest first. Listed by hand, so that the bundled server carries them. */
@@ -20,4 +21,5 @@ export const migrations: readonly Migration[] = [
   marketData,
   studies,
   exportFiles,
+  runs,
 ];

@@ -8,9 +8,7 @@ import {
 } from 'sequelize';
 import type { RunStatus } from '@/shared/contracts/runs';
 import { sequelize } from '../database';
-import { Book } from './book';
 import { PricingPolicy } from './pricing-policy';
-import { RunBook } from './run-book';
 import { User } from './user';
 
 /** A run over the live trades of some books; what it found is in the chain of valuations. */
@@ -52,7 +50,6 @@ export class ValuationRun extends Model<
   declare signedOffAt: CreationOptional<Date | null>;
   declare signOffComment: CreationOptional<string | null>;
   declare policy?: NonAttribute<PricingPolicy>;
-  declare books?: NonAttribute<Book[]>;
   declare rerunOf?: NonAttribute<ValuationRun | null>;
   declare startedBy?: NonAttribute<User>;
   declare cancelledBy?: NonAttribute<User | null>;
@@ -101,12 +98,6 @@ ValuationRun.init(
   { sequelize, tableName: 'valuation_runs' },
 );
 ValuationRun.belongsTo(PricingPolicy, { as: 'policy', foreignKey: 'policyId' });
-ValuationRun.belongsToMany(Book, {
-  as: 'books',
-  through: RunBook,
-  foreignKey: 'runId',
-  otherKey: 'bookId',
-});
 ValuationRun.belongsTo(ValuationRun, { as: 'rerunOf', foreignKey: 'rerunOfId' });
 ValuationRun.belongsTo(User, { as: 'startedBy', foreignKey: 'startedById' });
 ValuationRun.belongsTo(User, { as: 'cancelledBy', foreignKey: 'cancelledById' });

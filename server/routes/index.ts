@@ -12,6 +12,7 @@ import { marketDataRoutes } from './market-data';
 import { peopleRoutes } from './people';
 import { policyRoutes } from './policies';
 import { quoteRoutes } from './quotes';
+import { runRoutes } from './runs';
 import { sessionRoutes } from './sessions';
 import { studyRoutes } from './studies';
 import { tradeRoutes } from './trades';
@@ -27,6 +28,7 @@ export const routes: readonly Route[] = [
   ...policyRoutes,
   ...bookRoutes,
   ...tradeRoutes,
+  ...runRoutes,
   ...studyRoutes,
   ...chainRoutes,
   ...historyRoutes,

@@ -58,6 +58,7 @@ export type LiveTrade = {
   strike: string;
   expiryDate: string;
   expiryAt: Date;
+  tradedAt: Date;
   /** Whoever proposed, amended, approved or returned a version of it. */
   touchedByIds: string[];
 };
@@ -68,7 +69,7 @@ const liveTrades = `
     version.underlying_id AS "underlyingId", underlying.currency, version.direction,
     version.quantity, version.contract_size AS "contractSize", version.kind, version.exercise,
     version.strike, version.expiry_date::text AS "expiryDate", version.expiry_at AS "expiryAt",
-    touched.ids AS "touchedByIds"
+    version.traded_at AS "tradedAt", touched.ids AS "touchedByIds"
   FROM trades trade
   JOIN books book ON book.id = trade.book_id
   JOIN trade_versions version ON version.id = trade.live_version_id

@@ -8,6 +8,7 @@ import * as marketData from './market-data';
 import * as people from './people';
 import * as policies from './policies';
 import * as quotes from './quotes';
+import * as runs from './runs';
 import * as sessions from './sessions';
 import * as studies from './studies';
 import * as tradeActs from './trade-acts';
@@ -55,6 +56,17 @@ export const endpoints = {
   returnTrade: tradeActs.returnTrade,
   closeTrade: tradeActs.closeTrade,
   recordExpiry: tradeActs.recordExpiry,
+  createRun: runs.createRun,
+  listRuns: runs.listRuns,
+  getRun: runs.getRun,
+  cancelRun: runs.cancelRun,
+  rerunRun: runs.rerunRun,
+  listRunValuations: runs.listRunValuations,
+  listRunExceptions: runs.listRunExceptions,
+  getRunException: runs.getRunException,
+  answerByOverride: runs.answerByOverride,
+  answerByStudy: runs.answerByStudy,
+  signOffRun: runs.signOffRun,
   createStudy: studies.createStudy,
   listStudies: studies.listStudies,
   getStudy: studies.getStudy,

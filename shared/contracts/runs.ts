@@ -159,7 +159,7 @@ export const runExceptionSchema = z.object({
   makerIds: z
     .array(idSchema)
     .describe('Whoever started the run or touched the trade: cannot answer by a note'),
-  answer: exceptionAnswerSchema.nullable(),
+  answer: exceptionAnswerSchema.nullable().describe('Null while it is open'),
 });
 export type RunException = z.infer<typeof runExceptionSchema>;
 

@@ -81,6 +81,21 @@ CREATE FUNCTION public.guard_market_quote() RETURNS trigger
     RAISE EXCEPTION '% of a quote is refused: its snapshot is no draft, or quotes are replaced whole',
       TG_OP USING ERRCODE = 'integrity_constraint_violation';
   END $$;
+CREATE FUNCTION public.guard_settled() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+  BEGIN
+    IF TG_OP = 'UPDATE' THEN
+      IF TG_TABLE_NAME = 'valuation_runs' AND
+        to_jsonb(OLD) ->> 'status' NOT IN ('cancelled', 'signed-off') THEN RETURN NEW; END IF;
+      IF TG_TABLE_NAME = 'run_exceptions' AND
+        to_jsonb(OLD) ->> 'state' = 'open' THEN RETURN NEW; END IF;
+      IF TG_TABLE_NAME = 'run_chunks' AND
+        to_jsonb(OLD) ->> 'done_at' IS NULL THEN RETURN NEW; END IF;
+    END IF;
+    RAISE EXCEPTION '% of a row of % is refused: it is settled', TG_OP, TG_TABLE_NAME
+      USING ERRCODE = 'integrity_constraint_violation';
+  END $$;
 CREATE FUNCTION public.guard_truncate() RETURNS trigger
     LANGUAGE plpgsql
     AS $$
@@ -225,8 +240,10 @@ CREATE TABLE public.desks (
     last_quote_number integer DEFAULT 0 NOT NULL,
     created_at timestamp(3) with time zone NOT NULL,
     last_trade_number integer DEFAULT 0 NOT NULL,
+    last_run_number integer DEFAULT 0 NOT NULL,
     CONSTRAINT desks_expiry_cutoff_check CHECK ((expiry_cutoff ~ '^([01][0-9]|2[0-3]):[0-5][0-9]$'::text)),
     CONSTRAINT desks_last_quote_number_check CHECK ((last_quote_number >= 0)),
+    CONSTRAINT desks_last_run_number_check CHECK ((last_run_number >= 0)),
     CONSTRAINT desks_last_trade_number_check CHECK ((last_trade_number >= 0)),
     CONSTRAINT desks_name_check CHECK ((name <> ''::text)),
     CONSTRAINT desks_time_zone_check CHECK ((time_zone <> ''::text))
@@ -450,6 +467,60 @@ CREATE TABLE public.quotes (
     CONSTRAINT quotes_volatility_check CHECK (((volatility > (0)::double precision) AND (volatility < 'Infinity'::double precision))),
     CONSTRAINT quotes_yield_check CHECK ((abs(yield) < 'Infinity'::double precision))
 );
+CREATE TABLE public.run_books (
+    run_id uuid NOT NULL,
+    book_id uuid NOT NULL,
+    desk_id uuid NOT NULL,
+    is_active boolean NOT NULL,
+    trades integer NOT NULL,
+    CONSTRAINT run_books_trades_check CHECK ((trades >= 0))
+);
+CREATE TABLE public.run_chunks (
+    run_id uuid NOT NULL,
+    number integer NOT NULL,
+    trade_version_ids uuid[] NOT NULL,
+    done_at timestamp(3) with time zone,
+    CONSTRAINT run_chunks_number_check CHECK ((number >= 1)),
+    CONSTRAINT run_chunks_trade_version_ids_check CHECK ((cardinality(trade_version_ids) >= 1))
+);
+CREATE TABLE public.run_exceptions (
+    id uuid NOT NULL,
+    desk_id uuid NOT NULL,
+    run_id uuid NOT NULL,
+    trade_id uuid NOT NULL,
+    trade_version_id uuid NOT NULL,
+    kind text NOT NULL,
+    gravity integer GENERATED ALWAYS AS (
+CASE kind
+    WHEN 'failure'::text THEN 1
+    WHEN 'disagree'::text THEN 2
+    WHEN 'refuted'::text THEN 3
+    WHEN 'unchecked'::text THEN 4
+    ELSE 5
+END) STORED NOT NULL,
+    materiality numeric,
+    descent numeric GENERATED ALWAYS AS ((- COALESCE(materiality, 'Infinity'::numeric))) STORED NOT NULL,
+    state text NOT NULL,
+    answer_kind text,
+    study_id uuid,
+    override_value numeric,
+    rerun_id uuid,
+    reason text,
+    answered_by_id uuid,
+    answered_at timestamp(3) with time zone,
+    CONSTRAINT run_exceptions_answer_kind_check CHECK ((answer_kind = ANY (ARRAY['study'::text, 'override'::text, 'rerun'::text]))),
+    CONSTRAINT run_exceptions_check CHECK (((state = 'answered'::text) = (answer_kind IS NOT NULL))),
+    CONSTRAINT run_exceptions_check1 CHECK (((state = 'answered'::text) = (answered_by_id IS NOT NULL))),
+    CONSTRAINT run_exceptions_check2 CHECK (((state = 'answered'::text) = (answered_at IS NOT NULL))),
+    CONSTRAINT run_exceptions_check3 CHECK (((study_id IS NOT NULL) = COALESCE((answer_kind = 'study'::text), false))),
+    CONSTRAINT run_exceptions_check4 CHECK (((rerun_id IS NOT NULL) = COALESCE((answer_kind = 'rerun'::text), false))),
+    CONSTRAINT run_exceptions_check5 CHECK (((override_value IS NULL) OR (answer_kind = 'override'::text))),
+    CONSTRAINT run_exceptions_check6 CHECK (((reason IS NOT NULL) = COALESCE((answer_kind = ANY (ARRAY['study'::text, 'override'::text])), false))),
+    CONSTRAINT run_exceptions_kind_check CHECK ((kind = ANY (ARRAY['failure'::text, 'disagree'::text, 'refuted'::text, 'unchecked'::text, 'wide'::text]))),
+    CONSTRAINT run_exceptions_materiality_check CHECK ((materiality >= (0)::numeric)),
+    CONSTRAINT run_exceptions_reason_check CHECK ((reason <> ''::text)),
+    CONSTRAINT run_exceptions_state_check CHECK ((state = ANY (ARRAY['open'::text, 'answered'::text])))
+);
 CREATE TABLE public.schema_migrations (
     name text NOT NULL,
     run_at timestamp with time zone DEFAULT now() NOT NULL,
@@ -667,6 +738,67 @@ CREATE TABLE public.users (
     CONSTRAINT users_name_check CHECK ((name <> ''::text)),
     CONSTRAINT users_password_hash_check CHECK ((password_hash <> ''::text))
 );
+CREATE TABLE public.valuation_runs (
+    id uuid NOT NULL,
+    desk_id uuid NOT NULL,
+    ordinal integer NOT NULL,
+    number text GENERATED ALWAYS AS (('R-'::text || lpad((ordinal)::text, GREATEST(4, length((ordinal)::text)), '0'::text))) STORED NOT NULL,
+    snapshot_id uuid NOT NULL,
+    snapshot_date date NOT NULL,
+    policy_id uuid NOT NULL,
+    valued_at timestamp(3) with time zone NOT NULL,
+    engine text NOT NULL,
+    status text NOT NULL,
+    is_active boolean GENERATED ALWAYS AS ((status = ANY (ARRAY['queued'::text, 'running'::text]))) STORED NOT NULL,
+    version integer NOT NULL,
+    rerun_of_id uuid,
+    total integer NOT NULL,
+    done integer DEFAULT 0 NOT NULL,
+    left_out integer DEFAULT 0 NOT NULL,
+    agree integer DEFAULT 0 NOT NULL,
+    wide integer DEFAULT 0 NOT NULL,
+    disagree integer DEFAULT 0 NOT NULL,
+    one_route integer DEFAULT 0 NOT NULL,
+    failed integer DEFAULT 0 NOT NULL,
+    refuted integer DEFAULT 0 NOT NULL,
+    totals jsonb,
+    started_by_id uuid NOT NULL,
+    started_at timestamp(3) with time zone NOT NULL,
+    finished_at timestamp(3) with time zone,
+    cancelled_by_id uuid,
+    cancelled_at timestamp(3) with time zone,
+    signed_off_by_id uuid,
+    signed_off_at timestamp(3) with time zone,
+    sign_off_comment text,
+    CONSTRAINT valuation_runs_agree_check CHECK ((agree >= 0)),
+    CONSTRAINT valuation_runs_check CHECK ((rerun_of_id <> id)),
+    CONSTRAINT valuation_runs_check1 CHECK (((done <= total) AND (refuted <= done))),
+    CONSTRAINT valuation_runs_check10 CHECK (((signed_off_by_id IS NULL) = (signed_off_at IS NULL))),
+    CONSTRAINT valuation_runs_check11 CHECK (((sign_off_comment IS NULL) = (signed_off_at IS NULL))),
+    CONSTRAINT valuation_runs_check12 CHECK ((signed_off_by_id <> started_by_id)),
+    CONSTRAINT valuation_runs_check2 CHECK ((((((agree + wide) + disagree) + one_route) + failed) = done)),
+    CONSTRAINT valuation_runs_check3 CHECK (((status <> 'queued'::text) OR (done = 0))),
+    CONSTRAINT valuation_runs_check4 CHECK (((done = total) = (status = ANY (ARRAY['finished'::text, 'signed-off'::text])))),
+    CONSTRAINT valuation_runs_check5 CHECK (((finished_at IS NOT NULL) = (status = ANY (ARRAY['finished'::text, 'signed-off'::text])))),
+    CONSTRAINT valuation_runs_check6 CHECK (((totals IS NOT NULL) = (status = ANY (ARRAY['finished'::text, 'signed-off'::text])))),
+    CONSTRAINT valuation_runs_check7 CHECK (((cancelled_at IS NOT NULL) = (status = 'cancelled'::text))),
+    CONSTRAINT valuation_runs_check8 CHECK (((cancelled_by_id IS NULL) = (cancelled_at IS NULL))),
+    CONSTRAINT valuation_runs_check9 CHECK (((signed_off_at IS NOT NULL) = (status = 'signed-off'::text))),
+    CONSTRAINT valuation_runs_disagree_check CHECK ((disagree >= 0)),
+    CONSTRAINT valuation_runs_done_check CHECK ((done >= 0)),
+    CONSTRAINT valuation_runs_engine_check CHECK ((engine <> ''::text)),
+    CONSTRAINT valuation_runs_failed_check CHECK ((failed >= 0)),
+    CONSTRAINT valuation_runs_left_out_check CHECK ((left_out >= 0)),
+    CONSTRAINT valuation_runs_one_route_check CHECK ((one_route >= 0)),
+    CONSTRAINT valuation_runs_ordinal_check CHECK ((ordinal >= 1)),
+    CONSTRAINT valuation_runs_refuted_check CHECK ((refuted >= 0)),
+    CONSTRAINT valuation_runs_sign_off_comment_check CHECK ((sign_off_comment <> ''::text)),
+    CONSTRAINT valuation_runs_status_check CHECK ((status = ANY (ARRAY['queued'::text, 'running'::text, 'finished'::text, 'cancelled'::text, 'signed-off'::text]))),
+    CONSTRAINT valuation_runs_total_check CHECK ((total >= 1)),
+    CONSTRAINT valuation_runs_totals_check CHECK ((jsonb_typeof(totals) = 'object'::text)),
+    CONSTRAINT valuation_runs_version_check CHECK ((version >= 0)),
+    CONSTRAINT valuation_runs_wide_check CHECK ((wide >= 0))
+);
 ALTER TABLE ONLY public.books
     ADD CONSTRAINT books_desk_id_code_key UNIQUE (desk_id, code);
 ALTER TABLE ONLY public.books
@@ -715,6 +847,14 @@ ALTER TABLE ONLY public.quotes
     ADD CONSTRAINT quotes_desk_id_number_key UNIQUE (desk_id, number);
 ALTER TABLE ONLY public.quotes
     ADD CONSTRAINT quotes_pkey PRIMARY KEY (id);
+ALTER TABLE ONLY public.run_books
+    ADD CONSTRAINT run_books_pkey PRIMARY KEY (run_id, book_id);
+ALTER TABLE ONLY public.run_chunks
+    ADD CONSTRAINT run_chunks_pkey PRIMARY KEY (run_id, number);
+ALTER TABLE ONLY public.run_exceptions
+    ADD CONSTRAINT run_exceptions_pkey PRIMARY KEY (id);
+ALTER TABLE ONLY public.run_exceptions
+    ADD CONSTRAINT run_exceptions_run_id_trade_id_key UNIQUE (run_id, trade_id);
 ALTER TABLE ONLY public.schema_migrations
     ADD CONSTRAINT schema_migrations_pkey PRIMARY KEY (name);
 ALTER TABLE ONLY public.sessions
@@ -747,6 +887,14 @@ ALTER TABLE ONLY public.users
     ADD CONSTRAINT users_email_key UNIQUE (email);
 ALTER TABLE ONLY public.users
     ADD CONSTRAINT users_pkey PRIMARY KEY (id);
+ALTER TABLE ONLY public.valuation_runs
+    ADD CONSTRAINT valuation_runs_desk_id_id_key UNIQUE (desk_id, id);
+ALTER TABLE ONLY public.valuation_runs
+    ADD CONSTRAINT valuation_runs_desk_id_ordinal_key UNIQUE (desk_id, ordinal);
+ALTER TABLE ONLY public.valuation_runs
+    ADD CONSTRAINT valuation_runs_id_is_active_key UNIQUE (id, is_active);
+ALTER TABLE ONLY public.valuation_runs
+    ADD CONSTRAINT valuation_runs_pkey PRIMARY KEY (id);
 CREATE INDEX chain_anchors_chain ON public.chain_anchors USING btree (chain, "position", id);
 CREATE INDEX chain_entries_book ON public.chain_entries USING btree (chain, book_id, valued_at, "position") WHERE (role = 'primary'::text);
 CREATE INDEX chain_entries_run ON public.chain_entries USING btree (chain, run_number, valued_at, "position") WHERE (role = 'primary'::text);
@@ -769,6 +917,11 @@ CREATE INDEX memberships_user_id ON public.memberships USING btree (user_id);
 CREATE UNIQUE INDEX pricing_policies_approved ON public.pricing_policies USING btree (desk_id) WHERE (status = 'approved'::text);
 CREATE UNIQUE INDEX pricing_policies_draft ON public.pricing_policies USING btree (desk_id) WHERE (status = 'draft'::text);
 CREATE INDEX quotes_desk_id_created_at ON public.quotes USING btree (desk_id, created_at DESC, id DESC);
+CREATE UNIQUE INDEX run_books_active ON public.run_books USING btree (book_id) WHERE is_active;
+CREATE INDEX run_books_book_id ON public.run_books USING btree (book_id, run_id);
+CREATE INDEX run_exceptions_order ON public.run_exceptions USING btree (run_id, state DESC, gravity, descent, id);
+CREATE INDEX run_exceptions_study_id ON public.run_exceptions USING btree (study_id) WHERE (study_id IS NOT NULL);
+CREATE INDEX run_exceptions_trade_id ON public.run_exceptions USING btree (trade_id);
 CREATE INDEX sessions_expires_at ON public.sessions USING btree (expires_at);
 CREATE INDEX sessions_user_id ON public.sessions USING btree (user_id);
 CREATE INDEX studies_desk_id ON public.studies USING btree (desk_id, created_at DESC, id DESC);
@@ -779,12 +932,20 @@ CREATE INDEX trades_book_id_expiry_at ON public.trades USING btree (book_id, exp
 CREATE INDEX trades_book_id_ordinal ON public.trades USING btree (book_id, ordinal, id);
 CREATE INDEX trades_desk_id_expiry_at ON public.trades USING btree (desk_id, expiry_at, id);
 CREATE INDEX trades_waiting ON public.trades USING btree (desk_id, ordinal) WHERE (status = ANY (ARRAY['proposed'::text, 'amended'::text]));
+CREATE INDEX valuation_runs_desk_id ON public.valuation_runs USING btree (desk_id, started_at DESC, id DESC);
+CREATE INDEX valuation_runs_rerun_of_id ON public.valuation_runs USING btree (rerun_of_id) WHERE (rerun_of_id IS NOT NULL);
 CREATE TRIGGER guard_row BEFORE INSERT OR DELETE OR UPDATE ON public.market_quotes FOR EACH ROW EXECUTE FUNCTION public.guard_market_quote();
 ALTER TABLE public.market_quotes ENABLE ALWAYS TRIGGER guard_row;
 CREATE TRIGGER guard_row BEFORE INSERT OR DELETE OR UPDATE ON public.market_snapshots FOR EACH ROW EXECUTE FUNCTION public.guard_approved();
 ALTER TABLE public.market_snapshots ENABLE ALWAYS TRIGGER guard_row;
 CREATE TRIGGER guard_row BEFORE INSERT OR DELETE OR UPDATE ON public.pricing_policies FOR EACH ROW EXECUTE FUNCTION public.guard_approved();
 ALTER TABLE public.pricing_policies ENABLE ALWAYS TRIGGER guard_row;
+CREATE TRIGGER guard_row BEFORE DELETE OR UPDATE ON public.run_chunks FOR EACH ROW EXECUTE FUNCTION public.guard_settled();
+ALTER TABLE public.run_chunks ENABLE ALWAYS TRIGGER guard_row;
+CREATE TRIGGER guard_row BEFORE DELETE OR UPDATE ON public.run_exceptions FOR EACH ROW EXECUTE FUNCTION public.guard_settled();
+ALTER TABLE public.run_exceptions ENABLE ALWAYS TRIGGER guard_row;
+CREATE TRIGGER guard_row BEFORE DELETE OR UPDATE ON public.valuation_runs FOR EACH ROW EXECUTE FUNCTION public.guard_settled();
+ALTER TABLE public.valuation_runs ENABLE ALWAYS TRIGGER guard_row;
 CREATE TRIGGER guard_truncate BEFORE TRUNCATE ON public.market_quotes FOR EACH STATEMENT EXECUTE FUNCTION public.guard_truncate();
 ALTER TABLE public.market_quotes ENABLE ALWAYS TRIGGER guard_truncate;
 CREATE TRIGGER guard_truncate BEFORE TRUNCATE ON public.market_snapshots FOR EACH STATEMENT EXECUTE FUNCTION public.guard_truncate();
@@ -868,6 +1029,26 @@ ALTER TABLE ONLY public.quotes
     ADD CONSTRAINT quotes_desk_id_snapshot_id_fkey FOREIGN KEY (desk_id, snapshot_id) REFERENCES public.market_snapshots(desk_id, id);
 ALTER TABLE ONLY public.quotes
     ADD CONSTRAINT quotes_desk_id_underlying_id_fkey FOREIGN KEY (desk_id, underlying_id) REFERENCES public.underlyings(desk_id, id);
+ALTER TABLE ONLY public.run_books
+    ADD CONSTRAINT run_books_desk_id_book_id_fkey FOREIGN KEY (desk_id, book_id) REFERENCES public.books(desk_id, id);
+ALTER TABLE ONLY public.run_books
+    ADD CONSTRAINT run_books_desk_id_run_id_fkey FOREIGN KEY (desk_id, run_id) REFERENCES public.valuation_runs(desk_id, id);
+ALTER TABLE ONLY public.run_books
+    ADD CONSTRAINT run_books_run_id_is_active_fkey FOREIGN KEY (run_id, is_active) REFERENCES public.valuation_runs(id, is_active) ON UPDATE CASCADE;
+ALTER TABLE ONLY public.run_chunks
+    ADD CONSTRAINT run_chunks_run_id_fkey FOREIGN KEY (run_id) REFERENCES public.valuation_runs(id);
+ALTER TABLE ONLY public.run_exceptions
+    ADD CONSTRAINT run_exceptions_answered_by_id_fkey FOREIGN KEY (answered_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.run_exceptions
+    ADD CONSTRAINT run_exceptions_desk_id_rerun_id_fkey FOREIGN KEY (desk_id, rerun_id) REFERENCES public.valuation_runs(desk_id, id);
+ALTER TABLE ONLY public.run_exceptions
+    ADD CONSTRAINT run_exceptions_desk_id_run_id_fkey FOREIGN KEY (desk_id, run_id) REFERENCES public.valuation_runs(desk_id, id);
+ALTER TABLE ONLY public.run_exceptions
+    ADD CONSTRAINT run_exceptions_desk_id_trade_id_fkey FOREIGN KEY (desk_id, trade_id) REFERENCES public.trades(desk_id, id);
+ALTER TABLE ONLY public.run_exceptions
+    ADD CONSTRAINT run_exceptions_study_id_fkey FOREIGN KEY (study_id) REFERENCES public.studies(id);
+ALTER TABLE ONLY public.run_exceptions
+    ADD CONSTRAINT run_exceptions_trade_id_trade_version_id_fkey FOREIGN KEY (trade_id, trade_version_id) REFERENCES public.trade_versions(trade_id, id);
 ALTER TABLE ONLY public.sessions
     ADD CONSTRAINT sessions_user_id_fkey FOREIGN KEY (user_id) REFERENCES public.users(id);
 ALTER TABLE ONLY public.studies
@@ -876,6 +1057,8 @@ ALTER TABLE ONLY public.studies
     ADD CONSTRAINT studies_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
 ALTER TABLE ONLY public.studies
     ADD CONSTRAINT studies_desk_id_underlying_id_fkey FOREIGN KEY (desk_id, underlying_id) REFERENCES public.underlyings(desk_id, id);
+ALTER TABLE ONLY public.studies
+    ADD CONSTRAINT studies_exception_id_fkey FOREIGN KEY (exception_id) REFERENCES public.run_exceptions(id);
 ALTER TABLE ONLY public.studies
     ADD CONSTRAINT studies_quote_id_fkey FOREIGN KEY (quote_id) REFERENCES public.quotes(id);
 ALTER TABLE ONLY public.studies
@@ -906,12 +1089,27 @@ ALTER TABLE ONLY public.trades
     ADD CONSTRAINT trades_proposed_by_id_fkey FOREIGN KEY (proposed_by_id) REFERENCES public.users(id);
 ALTER TABLE ONLY public.underlyings
     ADD CONSTRAINT underlyings_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
+ALTER TABLE ONLY public.valuation_runs
+    ADD CONSTRAINT valuation_runs_cancelled_by_id_fkey FOREIGN KEY (cancelled_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.valuation_runs
+    ADD CONSTRAINT valuation_runs_desk_id_fkey FOREIGN KEY (desk_id) REFERENCES public.desks(id);
+ALTER TABLE ONLY public.valuation_runs
+    ADD CONSTRAINT valuation_runs_desk_id_policy_id_fkey FOREIGN KEY (desk_id, policy_id) REFERENCES public.pricing_policies(desk_id, id);
+ALTER TABLE ONLY public.valuation_runs
+    ADD CONSTRAINT valuation_runs_desk_id_rerun_of_id_fkey FOREIGN KEY (desk_id, rerun_of_id) REFERENCES public.valuation_runs(desk_id, id);
+ALTER TABLE ONLY public.valuation_runs
+    ADD CONSTRAINT valuation_runs_desk_id_snapshot_id_fkey FOREIGN KEY (desk_id, snapshot_id) REFERENCES public.market_snapshots(desk_id, id);
+ALTER TABLE ONLY public.valuation_runs
+    ADD CONSTRAINT valuation_runs_signed_off_by_id_fkey FOREIGN KEY (signed_off_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.valuation_runs
+    ADD CONSTRAINT valuation_runs_started_by_id_fkey FOREIGN KEY (started_by_id) REFERENCES public.users(id);
 REVOKE USAGE ON SCHEMA public FROM PUBLIC;
 GRANT ALL ON SCHEMA public TO owner;
 GRANT USAGE ON SCHEMA public TO app;
 REVOKE ALL ON FUNCTION public.append(chain_name text, bodies text[]) FROM PUBLIC;
 GRANT ALL ON FUNCTION public.append(chain_name text, bodies text[]) TO app;
 REVOKE ALL ON FUNCTION public.chain_hash(previous text, chain text, pos bigint, at text, body text) FROM PUBLIC;
+REVOKE ALL ON FUNCTION public.guard_settled() FROM PUBLIC;
 REVOKE ALL ON FUNCTION public.lock_chain(chain_name text) FROM PUBLIC;
 GRANT ALL ON FUNCTION public.lock_chain(chain_name text) TO app;
 REVOKE ALL ON FUNCTION public.refuse_change() FROM PUBLIC;
@@ -934,6 +1132,7 @@ GRANT UPDATE(finished_at) ON TABLE public.chain_verifications TO app;
 GRANT SELECT,INSERT ON TABLE public.desks TO app;
 GRANT UPDATE(last_quote_number) ON TABLE public.desks TO app;
 GRANT UPDATE(last_trade_number) ON TABLE public.desks TO app;
+GRANT UPDATE(last_run_number) ON TABLE public.desks TO app;
 GRANT SELECT,INSERT ON TABLE public.exports TO app;
 GRANT UPDATE(status) ON TABLE public.exports TO app;
 GRANT UPDATE(done) ON TABLE public.exports TO app;
@@ -977,6 +1176,18 @@ GRANT UPDATE(approved_by_id) ON TABLE public.pricing_policies TO app;
 GRANT UPDATE(approved_at) ON TABLE public.pricing_policies TO app;
 GRANT UPDATE(superseded_by_id) ON TABLE public.pricing_policies TO app;
 GRANT SELECT,INSERT ON TABLE public.quotes TO app;
+GRANT SELECT,INSERT ON TABLE public.run_books TO app;
+GRANT SELECT,INSERT ON TABLE public.run_chunks TO app;
+GRANT UPDATE(done_at) ON TABLE public.run_chunks TO app;
+GRANT SELECT,INSERT ON TABLE public.run_exceptions TO app;
+GRANT UPDATE(state) ON TABLE public.run_exceptions TO app;
+GRANT UPDATE(answer_kind) ON TABLE public.run_exceptions TO app;
+GRANT UPDATE(study_id) ON TABLE public.run_exceptions TO app;
+GRANT UPDATE(override_value) ON TABLE public.run_exceptions TO app;
+GRANT UPDATE(rerun_id) ON TABLE public.run_exceptions TO app;
+GRANT UPDATE(reason) ON TABLE public.run_exceptions TO app;
+GRANT UPDATE(answered_by_id) ON TABLE public.run_exceptions TO app;
+GRANT UPDATE(answered_at) ON TABLE public.run_exceptions TO app;
 GRANT SELECT ON TABLE public.schema_migrations TO app;
 GRANT SELECT,INSERT,DELETE ON TABLE public.sessions TO app;
 GRANT UPDATE(refresh_hash) ON TABLE public.sessions TO app;
@@ -1030,3 +1241,20 @@ GRANT UPDATE(archived_at) ON TABLE public.underlyings TO app;
 GRANT SELECT,INSERT ON TABLE public.users TO app;
 GRANT UPDATE(name) ON TABLE public.users TO app;
 GRANT UPDATE(password_hash) ON TABLE public.users TO app;
+GRANT SELECT,INSERT ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(status) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(version) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(done) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(agree) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(wide) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(disagree) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(one_route) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(failed) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(refuted) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(totals) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(finished_at) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(cancelled_by_id) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(cancelled_at) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(signed_off_by_id) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(signed_off_at) ON TABLE public.valuation_runs TO app;
+GRANT UPDATE(sign_off_comment) ON TABLE public.valuation_runs TO app;

@@ -29,6 +29,13 @@ import {
 import { makeQuote, quoteDraft } from '../factories/quotes';
 import { makeStudy, studyDraft } from '../factories/studies';
 import { makeBook, makeTrade, proposal } from '../factories/trades';
+import {
+  makeException,
+  makeFilledBook,
+  makeFinishedRun,
+  policyInForce,
+  startRun,
+} from '../factories/runs';
 import { storeValuations, valuationPair } from '../factories/valuations';
 
 withServer();
@@ -85,6 +92,26 @@ async function liveTrade(): Promise<string> {
   return (await makeTrade(await makeBook(desk), underlying, await makeUser(), { approver })).id;
 }
 
+/** A run of someone who does nothing else here; its only trade is the put that studies are of. */
+const finishedRun = () => makeFinishedRun(desk, underlying, { day: freshDay() });
+
+/** Read by many and changed by nobody. */
+let readRun: Promise<{ runId: string; exceptionId: string }> | null = null;
+
+async function runWithException() {
+  const run = await finishedRun();
+  return { runId: run.id, exceptionId: (await makeException(run)).id };
+}
+
+async function runParams({ method, path }: Endpoint): Promise<Record<string, string>> {
+  if (method === 'GET') return (readRun ??= runWithException());
+  if (path.includes(':exceptionId')) return runWithException();
+  if (!path.endsWith('/cancel')) return { runId: (await finishedRun()).id };
+  const snapshot = await makeApprovedClose(desk, underlying, freshDay());
+  const books = [await makeFilledBook(desk, underlying)];
+  return { runId: (await startRun(desk, { books, snapshot })).id };
+}
+
 /** Endpoints whose record must be in a certain state, or whose example needs a record's id. */
 const special: Partial<Record<EndpointName, (prepared: Prepared) => Promise<Prepared>>> = {
   async createQuote({ params, body }) {
@@ -124,6 +151,19 @@ const special: Partial<Record<EndpointName, (prepared: Prepared) => Promise<Prep
     const { id } = await makeStudy(desk, underlying, await makeUser(), 'queued');
     return { params: { ...params, studyId: id }, body };
   },
+  async createRun({ params }) {
+    await policyInForce(desk);
+    const book = await makeFilledBook(desk, underlying);
+    const snapshot = await makeApprovedClose(desk, underlying, freshDay());
+    return { params, body: { bookIds: [book.id], snapshotId: snapshot.id } };
+  },
+  async signOffRun({ params, body }) {
+    return { params, body: { ...(body as Body), version: 1 } };
+  },
+  async answerByStudy({ params, body }) {
+    const study = await makeStudy(desk, underlying, await makeUser());
+    return { params, body: { ...(body as Body), studyId: study.id } };
+  },
   async reinstateMember({ params, body }) {
     const { user } = await makeMember(desk, 'analyst', suspended());
     return { params: { ...params, userId: user.id }, body };
@@ -156,6 +196,7 @@ async function paramsFor(endpoint: Endpoint): Promise<Record<string, string>> {
     params.policyId = (await makeDraftPolicy(desk, await makeUser())).id;
   if (endpoint.path.includes(':studyId'))
     params.studyId = (await makeStudy(desk, underlying, await makeUser())).id;
+  if (endpoint.path.includes(':runId')) Object.assign(params, await runParams(endpoint));
   if (endpoint.path.includes(':date')) params.date = '2026-12-01';
   if (endpoint.path.includes(':position')) {
     const [{ position }] = await storeValuations(desk, [...valuationPair(underlying)]);

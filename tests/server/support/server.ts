@@ -8,6 +8,8 @@ import { migrate } from '@/server/migrate';
 import { closeExportThreads } from '@/server/services/export-file';
 import { closePasswordThreads } from '@/server/services/passwords';
 import { closePricingThreads } from '@/server/services/pricing';
+import { closeValuationThreads } from '@/server/services/run-threads';
+import { closeStudyThreads } from '@/server/services/study-threads';
 import { close, createApp } from '@/server/web';
 import { apiBase, type Endpoint } from '@/shared/endpoint';
 
@@ -23,7 +25,13 @@ export function withOwnDatabase() {
     await migrate(testEnvironment.DATABASE_OWNER_URL, testEnvironment.DATABASE_URL);
   });
   afterAll(async () => {
-    await Promise.all([closePasswordThreads(), closePricingThreads(), closeExportThreads()]);
+    await Promise.all([
+      closePasswordThreads(),
+      closePricingThreads(),
+      closeExportThreads(),
+      closeStudyThreads(),
+      closeValuationThreads(),
+    ]);
     await sequelize.close();
     await dropDatabase();
     removeFolder();
