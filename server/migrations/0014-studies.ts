@@ -1,9 +1,6 @@
 import type { Migration } from './migration';
 
-/**
- * Convergence studies and their rows, one transaction a row. A study of a trade or of an exception
- * names it; the tables of those come with their own migrations.
- */
+/** Convergence studies and their rows, one transaction a row. */
 export const studies: Migration = {
   name: '0014-studies',
   async up({ client }) {
@@ -16,8 +13,8 @@ export const studies: Migration = {
           ('S-' || lpad(ordinal::text, greatest(4, length(ordinal::text)), '0')) STORED,
         source text NOT NULL CHECK (source IN ('trade', 'quote', 'free')),
         quote_id uuid REFERENCES quotes,
-        trade_version_id uuid,
-        exception_id uuid,
+        trade_id uuid REFERENCES trades,
+        trade_version_id uuid REFERENCES trade_versions,
         underlying_id uuid NOT NULL,
         terms jsonb NOT NULL CHECK (jsonb_typeof(terms) = 'object'),
         request jsonb NOT NULL CHECK (jsonb_typeof(request) = 'object'),
@@ -39,7 +36,8 @@ export const studies: Migration = {
         UNIQUE (desk_id, ordinal),
         FOREIGN KEY (desk_id, underlying_id) REFERENCES underlyings (desk_id, id),
         CHECK ((source = 'quote') = (quote_id IS NOT NULL)),
-        CHECK ((source = 'trade') = (trade_version_id IS NOT NULL)),
+        CHECK ((source = 'trade') = (trade_id IS NOT NULL)),
+        CHECK ((trade_id IS NULL) = (trade_version_id IS NULL)),
         CHECK ((orders IS NOT NULL) = (status IN ('finished', 'signed-off', 'sent-back'))),
         CHECK ((decided_by_id IS NOT NULL) = (status IN ('signed-off', 'sent-back'))),
         CHECK ((decided_by_id IS NULL) = (decided_at IS NULL)),
@@ -48,6 +46,7 @@ export const studies: Migration = {
       );
       CREATE INDEX studies_desk_id ON studies (desk_id, created_at DESC, id DESC);
       CREATE INDEX studies_quote_id ON studies (quote_id) WHERE quote_id IS NOT NULL;
+      CREATE INDEX studies_trade_id ON studies (trade_id) WHERE trade_id IS NOT NULL;
 
       CREATE TABLE study_rows (
         study_id uuid NOT NULL REFERENCES studies,

@@ -133,9 +133,7 @@ const tables = `
   );
   CREATE INDEX run_exceptions_order ON run_exceptions (run_id, state DESC, gravity, descent, id);
   CREATE INDEX run_exceptions_trade_id ON run_exceptions (trade_id);
-  CREATE INDEX run_exceptions_study_id ON run_exceptions (study_id) WHERE study_id IS NOT NULL;
-
-  ALTER TABLE studies ADD FOREIGN KEY (exception_id) REFERENCES run_exceptions`;
+  CREATE INDEX run_exceptions_study_id ON run_exceptions (study_id) WHERE study_id IS NOT NULL`;
 
 /** What is settled stays: for the service as for everyone else. */
 const guards = `

@@ -10,6 +10,7 @@ import type { Contract, LadderStep, Market, MethodName, StudyReference } from '@
 import type { StudyStatus, StudySummary, StudyTerms } from '@/shared/contracts/studies';
 import { sequelize } from '../database';
 import { Quote } from './quote';
+import { Trade } from './trade';
 import { Underlying } from './underlying';
 import { User } from './user';
 
@@ -24,8 +25,8 @@ export class Study extends Model<InferAttributes<Study>, InferCreationAttributes
   declare number: CreationOptional<string>;
   declare source: 'trade' | 'quote' | 'free';
   declare quoteId: string | null;
+  declare tradeId: CreationOptional<string | null>;
   declare tradeVersionId: CreationOptional<string | null>;
-  declare exceptionId: CreationOptional<string | null>;
   declare underlyingId: string;
   declare terms: StudyTerms;
   declare request: { contract: Contract; market: Market };
@@ -45,6 +46,7 @@ export class Study extends Model<InferAttributes<Study>, InferCreationAttributes
   declare decidedAt: CreationOptional<Date | null>;
   declare decisionComment: CreationOptional<string | null>;
   declare quote?: NonAttribute<Quote | null>;
+  declare trade?: NonAttribute<Trade | null>;
   declare underlying?: NonAttribute<Underlying>;
   declare startedBy?: NonAttribute<User>;
   declare decidedBy?: NonAttribute<User | null>;
@@ -64,8 +66,8 @@ Study.init(
     number: { type: DataTypes.TEXT },
     source: text(),
     quoteId: { type: DataTypes.UUID },
+    tradeId: { type: DataTypes.UUID },
     tradeVersionId: { type: DataTypes.UUID },
-    exceptionId: { type: DataTypes.UUID },
     underlyingId: id(),
     terms: json(),
     request: json(),
@@ -87,6 +89,7 @@ Study.init(
   { sequelize, tableName: 'studies' },
 );
 Study.belongsTo(Quote, { as: 'quote', foreignKey: 'quoteId' });
+Study.belongsTo(Trade, { as: 'trade', foreignKey: 'tradeId' });
 Study.belongsTo(Underlying, { as: 'underlying', foreignKey: 'underlyingId' });
 Study.belongsTo(User, { as: 'startedBy', foreignKey: 'startedById' });
 Study.belongsTo(User, { as: 'decidedBy', foreignKey: 'decidedById' });

@@ -37,6 +37,18 @@ export const approvedSnapshot = (
     transaction,
   });
 
+/** A close that is or was in force, and so may have been valued on; null: the last in force. */
+export const closeThatWasApproved = (
+  deskId: string,
+  snapshotId: string | null,
+): Promise<MarketSnapshot | null> =>
+  snapshotId === null
+    ? approvedSnapshot(deskId)
+    : MarketSnapshot.findOne({
+        where: { deskId, id: snapshotId, status: ['approved', 'superseded'] },
+        include: withQuotes,
+      });
+
 /** The market of an underlying on that close; null where the close does not have it. */
 export function marketIn(snapshot: MarketSnapshot, underlyingId: string): Market | null {
   if (!snapshot.quotes) throw new Error('A close was read without its quotes.');

@@ -8,67 +8,24 @@ import type {
   StudyDraft,
   StudyLadder,
   StudyStatus,
-  StudyTerms,
 } from '@/shared/contracts/studies';
-import { AppError, type Issue } from '@/shared/errors';
+import { AppError } from '@/shared/errors';
 import { pricingRequestOf } from '@/shared/quote-terms';
 import { appendRecord } from '../chain/append';
 import { sequelize } from '../database';
 import { Desk } from '../models/desk';
-import { Quote } from '../models/quote';
 import { Study, type PlannedLadder } from '../models/study';
 import { StudyRow } from '../models/study-row';
-import { Underlying } from '../models/underlying';
 import { addJob } from '../queue/add-job';
 import type { DeskActor } from './access';
 import { after, pageOf } from './page';
-import { quoteIssues, ticketIssue } from './quote-issues';
+import { ticketIssue } from './quote-issues';
 import { findReference } from './study-threads';
+import { subjectOf } from './study-subject';
 import { studyOf, summaryOf, withNames } from './study-views';
-import { marketOf } from './underlyings';
 import type { WriteOnce } from './write-once';
 
-type Subject = { source: 'quote' | 'free'; quoteId: string | null; terms: StudyTerms };
 type Request = { contract: Contract; market: Market };
-
-async function termsOfQuote(desk: Desk, quoteId: string): Promise<StudyTerms> {
-  const quote = await Quote.findOne({ where: { deskId: desk.id, id: quoteId } });
-  if (!quote) {
-    const message = 'There is no such quote on this desk; choose one from the list.';
-    const issue = { path: 'source.quoteId', code: 'unknown-quote', message };
-    throw new AppError('validation-failed', [issue]);
-  }
-  const { underlyingId, kind, exercise, strike, expiryDate } = quote;
-  return {
-    underlyingId,
-    kind,
-    exercise,
-    strike,
-    expiryDate,
-    market: marketOf(quote),
-    pricedAt: quote.pricedAt.toISOString(),
-  };
-}
-
-const below = (prefix: string, issues: readonly Issue[]): Issue[] =>
-  issues.map((issue) => ({
-    ...issue,
-    path: issue.path === '' ? prefix : `${prefix}.${issue.path}`,
-  }));
-
-async function subjectOf(desk: Desk, { source }: StudyDraft): Promise<Subject> {
-  if (source.kind === 'quote') {
-    const { quoteId } = source;
-    return { source: 'quote', quoteId, terms: await termsOfQuote(desk, quoteId) };
-  }
-  const { terms } = source;
-  const underlying = await Underlying.findOne({
-    where: { deskId: desk.id, id: terms.underlyingId, archivedAt: null },
-  });
-  const issues = quoteIssues(terms, underlying, desk, pricingRequestOf(terms, desk));
-  if (issues.length > 0) throw new AppError('validation-failed', below('source.terms', issues));
-  return { source: 'free', quoteId: null, terms };
-}
 
 function planned({ contract, market }: Request, ladder: StudyLadder, index: number): PlannedLadder {
   const { name, firstSize, rows } = ladder;
@@ -139,14 +96,21 @@ export const getStudy = (desk: Desk, id: string): Promise<StudyOnTheWire> => rea
 
 export async function listStudies(
   desk: Desk,
-  query: { cursor?: string; limit: number; status?: StudyStatus; quoteId?: string },
+  query: {
+    cursor?: string;
+    limit: number;
+    status?: StudyStatus;
+    quoteId?: string;
+    tradeId?: string;
+  },
 ) {
-  const { cursor, limit, status, quoteId } = query;
+  const { cursor, limit, status, quoteId, tradeId } = query;
   const rows = await Study.findAll({
     where: {
       deskId: desk.id,
       ...(status === undefined ? {} : { status }),
       ...(quoteId === undefined ? {} : { quoteId }),
+      ...(tradeId === undefined ? {} : { tradeId }),
       ...after('createdAt', cursor),
     },
     include: withNames,

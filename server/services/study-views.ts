@@ -11,24 +11,27 @@ import type {
 import { Quote } from '../models/quote';
 import type { PlannedLadder, Study } from '../models/study';
 import type { StudyRow } from '../models/study-row';
+import { Trade } from '../models/trade';
 import { Underlying } from '../models/underlying';
 import { User } from '../models/user';
 
 export const withNames: Includeable[] = [
   { model: Underlying, as: 'underlying', required: true },
   { model: Quote, as: 'quote', attributes: ['id', 'number'] },
+  { model: Trade, as: 'trade', attributes: ['id', 'number'] },
   { model: User, as: 'startedBy', attributes: ['id', 'name'], required: true },
   { model: User, as: 'decidedBy', attributes: ['id', 'name'] },
 ];
 
 function headOf(study: Study) {
-  const { underlying, startedBy, quote, terms } = study;
+  const { underlying, startedBy, quote, trade, terms } = study;
   if (!underlying || !startedBy) throw new Error('A study was read without what it points to.');
   return {
     id: study.id,
     number: study.number,
     source: study.source,
     quote: quote ? { id: quote.id, number: quote.number } : null,
+    trade: trade ? { id: trade.id, number: trade.number } : null,
     underlying: {
       id: underlying.id,
       symbol: underlying.symbol,

@@ -72,6 +72,13 @@ export const studyDraftSchema = z.strictObject({
     .discriminatedUnion('kind', [
       z.strictObject({ kind: z.literal('quote').describe('A saved quote'), quoteId: idSchema }),
       z.strictObject({
+        kind: z.literal('trade').describe('A trade, on an approved close'),
+        tradeId: idSchema,
+        snapshotId: idSchema
+          .nullable()
+          .describe('The close, at whose instant it is priced; null: the last approved one'),
+      }),
+      z.strictObject({
         kind: z.literal('free').describe('Terms of one’s own'),
         terms: studyTermsSchema.describe('The terms'),
       }),
@@ -146,6 +153,10 @@ export const studySummarySchema = z.object({
     .object({ id: idSchema, number: z.string().describe('Number of the quote') })
     .nullable()
     .describe('The quote that it is a study of'),
+  trade: z
+    .object({ id: idSchema, number: z.string().describe('Number of the trade') })
+    .nullable()
+    .describe('The trade that it is a study of'),
   underlying: studiedUnderlyingSchema.describe('Underlying'),
   kind: optionKindSchema,
   exercise: exerciseSchema,
@@ -220,7 +231,8 @@ export const listStudies = defineEndpoint({
   params: deskParamsSchema,
   query: pageQuerySchema.extend({
     status: studyStatusSchema.optional(),
-    quoteId: idSchema.optional(),
+    quoteId: idSchema.optional().describe('Only studies of this quote'),
+    tradeId: idSchema.optional().describe('Only studies of this trade'),
   }),
   response: pageOf(studySummarySchema),
 });

@@ -548,8 +548,8 @@ CREATE TABLE public.studies (
     number text GENERATED ALWAYS AS (('S-'::text || lpad((ordinal)::text, GREATEST(4, length((ordinal)::text)), '0'::text))) STORED NOT NULL,
     source text NOT NULL,
     quote_id uuid,
+    trade_id uuid,
     trade_version_id uuid,
-    exception_id uuid,
     underlying_id uuid NOT NULL,
     terms jsonb NOT NULL,
     request jsonb NOT NULL,
@@ -569,12 +569,13 @@ CREATE TABLE public.studies (
     decision_comment text,
     CONSTRAINT studies_check CHECK (((done >= 0) AND (done <= total))),
     CONSTRAINT studies_check1 CHECK (((source = 'quote'::text) = (quote_id IS NOT NULL))),
-    CONSTRAINT studies_check2 CHECK (((source = 'trade'::text) = (trade_version_id IS NOT NULL))),
-    CONSTRAINT studies_check3 CHECK (((orders IS NOT NULL) = (status = ANY (ARRAY['finished'::text, 'signed-off'::text, 'sent-back'::text])))),
-    CONSTRAINT studies_check4 CHECK (((decided_by_id IS NOT NULL) = (status = ANY (ARRAY['signed-off'::text, 'sent-back'::text])))),
-    CONSTRAINT studies_check5 CHECK (((decided_by_id IS NULL) = (decided_at IS NULL))),
-    CONSTRAINT studies_check6 CHECK (((decided_by_id IS NULL) = (decision_comment IS NULL))),
-    CONSTRAINT studies_check7 CHECK ((decided_by_id <> started_by_id)),
+    CONSTRAINT studies_check2 CHECK (((source = 'trade'::text) = (trade_id IS NOT NULL))),
+    CONSTRAINT studies_check3 CHECK (((trade_id IS NULL) = (trade_version_id IS NULL))),
+    CONSTRAINT studies_check4 CHECK (((orders IS NOT NULL) = (status = ANY (ARRAY['finished'::text, 'signed-off'::text, 'sent-back'::text])))),
+    CONSTRAINT studies_check5 CHECK (((decided_by_id IS NOT NULL) = (status = ANY (ARRAY['signed-off'::text, 'sent-back'::text])))),
+    CONSTRAINT studies_check6 CHECK (((decided_by_id IS NULL) = (decided_at IS NULL))),
+    CONSTRAINT studies_check7 CHECK (((decided_by_id IS NULL) = (decision_comment IS NULL))),
+    CONSTRAINT studies_check8 CHECK ((decided_by_id <> started_by_id)),
     CONSTRAINT studies_decision_comment_check CHECK ((decision_comment <> ''::text)),
     CONSTRAINT studies_engine_check CHECK ((engine <> ''::text)),
     CONSTRAINT studies_ladders_check CHECK ((jsonb_typeof(ladders) = 'array'::text)),
@@ -926,6 +927,7 @@ CREATE INDEX sessions_expires_at ON public.sessions USING btree (expires_at);
 CREATE INDEX sessions_user_id ON public.sessions USING btree (user_id);
 CREATE INDEX studies_desk_id ON public.studies USING btree (desk_id, created_at DESC, id DESC);
 CREATE INDEX studies_quote_id ON public.studies USING btree (quote_id) WHERE (quote_id IS NOT NULL);
+CREATE INDEX studies_trade_id ON public.studies USING btree (trade_id) WHERE (trade_id IS NOT NULL);
 CREATE UNIQUE INDEX trade_versions_approved ON public.trade_versions USING btree (trade_id) WHERE (state = 'approved'::text);
 CREATE UNIQUE INDEX trade_versions_waiting ON public.trade_versions USING btree (trade_id) WHERE (state = 'proposed'::text);
 CREATE INDEX trades_book_id_expiry_at ON public.trades USING btree (book_id, expiry_at, id);
@@ -1058,11 +1060,13 @@ ALTER TABLE ONLY public.studies
 ALTER TABLE ONLY public.studies
     ADD CONSTRAINT studies_desk_id_underlying_id_fkey FOREIGN KEY (desk_id, underlying_id) REFERENCES public.underlyings(desk_id, id);
 ALTER TABLE ONLY public.studies
-    ADD CONSTRAINT studies_exception_id_fkey FOREIGN KEY (exception_id) REFERENCES public.run_exceptions(id);
-ALTER TABLE ONLY public.studies
     ADD CONSTRAINT studies_quote_id_fkey FOREIGN KEY (quote_id) REFERENCES public.quotes(id);
 ALTER TABLE ONLY public.studies
     ADD CONSTRAINT studies_started_by_id_fkey FOREIGN KEY (started_by_id) REFERENCES public.users(id);
+ALTER TABLE ONLY public.studies
+    ADD CONSTRAINT studies_trade_id_fkey FOREIGN KEY (trade_id) REFERENCES public.trades(id);
+ALTER TABLE ONLY public.studies
+    ADD CONSTRAINT studies_trade_version_id_fkey FOREIGN KEY (trade_version_id) REFERENCES public.trade_versions(id);
 ALTER TABLE ONLY public.study_rows
     ADD CONSTRAINT study_rows_study_id_fkey FOREIGN KEY (study_id) REFERENCES public.studies(id);
 ALTER TABLE ONLY public.trade_versions

@@ -69,6 +69,7 @@ function studyWith(routes: StudyRoute[], fields: Partial<Study> = {}): Study {
     number: 'S-0001',
     source: 'free',
     quote: null,
+    trade: null,
     underlying: { id, symbol, name, currency, unit, priceDecimals },
     kind: 'put',
     exercise: 'european',
