@@ -1,22 +1,26 @@
-import { useState, type KeyboardEvent } from 'react';
+import { useState, type CSSProperties, type KeyboardEvent, type PointerEvent } from 'react';
 import { StyleSheet, View } from 'react-native';
+import Svg, { Circle, G, Line, Path } from 'react-native-svg';
 import { DataTable } from '@/components/ui/data-table';
 import { Section } from '@/components/ui/card';
 import { LinkButton } from '@/components/ui/text-field';
 import { Text } from '@/components/ui/text';
 import { studyChartText } from '@/constants/texts/studies';
-import { color, font, fontSize, space } from '@/constants/theme';
+import { color, space } from '@/constants/theme';
+import { ChartLabel } from './chart-label';
 import {
   convergenceScale,
-  errorText,
   errorTicks,
   expectedLine,
   frame,
+  nearestPlace,
   sizeTicks,
+  type ConvergencePlace,
   type ConvergencePoint,
   type ConvergenceScale,
   type ConvergenceSeries,
 } from './convergence-scale';
+import { errorText } from './error-text';
 
 export type ConvergenceChartProps = {
   /** Whose errors these are. */
@@ -59,11 +63,9 @@ export function ConvergenceChart(props: ConvergenceChartProps) {
   );
 }
 
-type Place = { series: number; point: number };
-
 function Drawing({ label, series, order, currency, sizeLabel }: ConvergenceChartProps) {
   const scale = convergenceScale(series);
-  const [place, setPlace] = useState<Place | null>(null);
+  const [place, setPlace] = useState<ConvergencePlace | null>(null);
   const read = place ? series[place.series]?.points[place.point] : undefined;
   const move = (event: KeyboardEvent) => {
     const next = neighbour(series, place, event.key);
@@ -71,32 +73,43 @@ function Drawing({ label, series, order, currency, sizeLabel }: ConvergenceChart
     event.preventDefault();
     setPlace(next);
   };
+  const point = (event: PointerEvent<HTMLDivElement>) => {
+    const box = event.currentTarget.getBoundingClientRect();
+    const perPixel = frame.width / box.width;
+    const at = {
+      x: (event.clientX - box.left) * perPixel,
+      y: (event.clientY - box.top) * perPixel,
+    };
+    setPlace(nearestPlace(series, scale, at));
+  };
   return (
     <View>
-      <svg
-        style={drawingStyle}
-        viewBox={`0 0 ${frame.width} ${frame.height}`}
+      <div
+        style={areaStyle}
         role="img"
         aria-label={`${studyChartText.title(label)}. ${studyChartText.hint}`}
         tabIndex={0}
         onKeyDown={move}
         onFocus={() => setPlace((before) => before ?? { series: 0, point: 0 })}
         onBlur={() => setPlace(null)}
+        onPointerMove={point}
+        onPointerDown={point}
         onPointerLeave={() => setPlace(null)}
       >
-        <Axes scale={scale} series={series} currency={currency} sizeLabel={sizeLabel} />
-        {series.map((one, index) => (
-          <SeriesMarks
-            key={one.id}
-            scale={scale}
-            series={one}
-            order={order}
-            ink={inks[index % inks.length]}
-            read={place?.series === index ? place.point : null}
-            onRead={(point) => setPlace({ series: index, point })}
-          />
-        ))}
-      </svg>
+        <Svg width="100%" viewBox={`0 0 ${frame.width} ${frame.height}`}>
+          <Axes scale={scale} series={series} currency={currency} sizeLabel={sizeLabel} />
+          {series.map((one, index) => (
+            <SeriesMarks
+              key={one.id}
+              scale={scale}
+              series={one}
+              order={order}
+              ink={inks[index % inks.length]}
+              read={place?.series === index ? place.point : null}
+            />
+          ))}
+        </Svg>
+      </div>
       <Legend series={series} order={order} />
       <View aria-live="polite" style={styles.readOut}>
         <Text size="small" tabular tone={read ? 'ink' : 'muted'}>
@@ -112,11 +125,11 @@ function Drawing({ label, series, order, currency, sizeLabel }: ConvergenceChart
 /** Left and right along a series, up and down between series. */
 function neighbour(
   series: readonly ConvergenceSeries[],
-  place: Place | null,
+  place: ConvergencePlace | null,
   key: string,
-): Place | null {
+): ConvergencePlace | null {
   const from = place ?? { series: 0, point: -1 };
-  const steps: Record<string, Place> = {
+  const steps: Record<string, ConvergencePlace> = {
     ArrowRight: { ...from, point: from.point + 1 },
     ArrowLeft: { ...from, point: from.point - 1 },
     ArrowDown: { ...from, series: from.series + 1 },
@@ -139,33 +152,33 @@ function Axes({
 }) {
   const bottom = frame.height - frame.bottom;
   return (
-    <g fill={color.muted} fontFamily={font.text} fontSize={fontSize.small}>
+    <G>
       {errorTicks(scale).map((tick) => (
-        <g key={tick}>
-          <line
+        <G key={tick}>
+          <Line
             x1={frame.left}
             x2={frame.width - frame.right}
             y1={scale.y(tick)}
             y2={scale.y(tick)}
             stroke={color.line}
           />
-          <text x={frame.left - 8} y={scale.y(tick) + 4} textAnchor="end">
+          <ChartLabel x={frame.left - 8} y={scale.y(tick) + 4} anchor="end">
             {errorText(tick, 1)}
-          </text>
-        </g>
+          </ChartLabel>
+        </G>
       ))}
       {sizeTicks(series).map((tick) => (
-        <text key={tick} x={scale.x(tick)} y={bottom + 18} textAnchor="middle">
+        <ChartLabel key={tick} x={scale.x(tick)} y={bottom + 18} anchor="middle">
           {tick}
-        </text>
+        </ChartLabel>
       ))}
-      <text x={frame.width - frame.right} y={bottom + 38} textAnchor="end">
+      <ChartLabel x={frame.width - frame.right} y={bottom + 38} anchor="end">
         {sizeLabel}
-      </text>
-      <text x={4} y={bottom + 38}>
+      </ChartLabel>
+      <ChartLabel x={4} y={bottom + 38} anchor="start">
         {studyChartText.error(currency)}
-      </text>
-    </g>
+      </ChartLabel>
+    </G>
   );
 }
 
@@ -181,40 +194,36 @@ function SeriesMarks({
   order,
   ink,
   read,
-  onRead,
 }: {
   scale: ConvergenceScale;
   series: ConvergenceSeries;
   order: number;
   ink: string;
   read: number | null;
-  onRead: (point: number) => void;
 }) {
   return (
-    <g>
+    <G>
       {series.points.length > 1 ? (
-        <path
+        <Path
           d={pathOf(scale, expectedLine(series, order))}
           stroke={color.muted}
           strokeDasharray="4 3"
           fill="none"
         />
       ) : null}
-      <path d={pathOf(scale, series.points)} stroke={ink} strokeWidth={2} fill="none" />
+      <Path d={pathOf(scale, series.points)} stroke={ink} strokeWidth={2} fill="none" />
       {series.points.map(({ size, error }, index) => (
-        <g key={size} onPointerEnter={() => onRead(index)} onPointerDown={() => onRead(index)}>
-          <circle cx={scale.x(size)} cy={scale.y(error)} r={18} fill="transparent" />
-          <circle
-            cx={scale.x(size)}
-            cy={scale.y(error)}
-            r={index === read ? 6.5 : 4.5}
-            fill={index === read ? ink : color.surface}
-            stroke={ink}
-            strokeWidth={2}
-          />
-        </g>
+        <Circle
+          key={size}
+          cx={scale.x(size)}
+          cy={scale.y(error)}
+          r={index === read ? 6.5 : 4.5}
+          fill={index === read ? ink : color.surface}
+          stroke={ink}
+          strokeWidth={2}
+        />
       ))}
-    </g>
+    </G>
   );
 }
 
@@ -223,9 +232,9 @@ function Legend({ series, order }: { series: readonly ConvergenceSeries[]; order
     <View style={styles.legend}>
       {series.map(({ id, label }, index) => (
         <View key={id} style={styles.legendItem}>
-          <svg width="22" height="12" aria-hidden>
-            <path d="M0 6h22" stroke={inks[index % inks.length]} strokeWidth={2} />
-            <circle
+          <Svg width={22} height={12}>
+            <Path d="M0 6h22" stroke={inks[index % inks.length]} strokeWidth={2} />
+            <Circle
               cx={11}
               cy={6}
               r={4}
@@ -233,14 +242,14 @@ function Legend({ series, order }: { series: readonly ConvergenceSeries[]; order
               stroke={inks[index % inks.length]}
               strokeWidth={2}
             />
-          </svg>
+          </Svg>
           <Text size="small">{label}</Text>
         </View>
       ))}
       <View style={styles.legendItem}>
-        <svg width="22" height="12" aria-hidden>
-          <path d="M0 6h22" stroke={color.muted} strokeDasharray="4 3" />
-        </svg>
+        <Svg width={22} height={12}>
+          <Path d="M0 6h22" stroke={color.muted} strokeDasharray="4 3" />
+        </Svg>
         <Text size="small">{studyChartText.slope(order)}</Text>
       </View>
     </View>
@@ -276,12 +285,8 @@ function PointTable({
   );
 }
 
-const drawingStyle = {
-  display: 'block',
-  width: '100%',
-  height: 'auto',
-  touchAction: 'pan-y',
-} as const;
+/** A finger still scrolls the page up and down; sideways it reads along the points. */
+const areaStyle: CSSProperties = { touchAction: 'pan-y' };
 
 const styles = StyleSheet.create({
   readOut: { minHeight: 22 },

@@ -1,6 +1,6 @@
 /** Where the points of a convergence chart lie: both axes logarithmic. */
+import { extent, least } from 'd3-array';
 import { scaleLog } from 'd3-scale';
-import { formatPower } from '@/shared/format/numbers';
 
 export type ConvergencePoint = { size: number; error: number };
 export type ConvergenceSeries = { id: string; label: string; points: readonly ConvergencePoint[] };
@@ -13,28 +13,18 @@ const errorRoom = 1.6;
 
 export function convergenceScale(series: readonly ConvergenceSeries[]) {
   const points = series.flatMap((one) => one.points);
-  const sizes = points.map(({ size }) => size);
-  const errors = points.map(({ error }) => error);
+  const [smallest = 1, largest = 1] = extent(points, ({ size }) => size);
+  const [best = 1, worst = 1] = extent(points, ({ error }) => error);
   const x = scaleLog()
-    .domain([Math.min(...sizes) / sizeRoom, Math.max(...sizes) * sizeRoom])
+    .domain([smallest / sizeRoom, largest * sizeRoom])
     .range([frame.left, frame.width - frame.right]);
   const y = scaleLog()
-    .domain([Math.min(...errors) / errorRoom, Math.max(...errors) * errorRoom])
+    .domain([best / errorRoom, worst * errorRoom])
     .range([frame.height - frame.bottom, frame.top]);
   return { x, y };
 }
 
 export type ConvergenceScale = ReturnType<typeof convergenceScale>;
-
-/** Down from here an error is written with a power of ten. */
-const smallestPlain = 0.1;
-
-/** An error in two digits. */
-export function errorText(error: number, digits = 2): string {
-  if (error === 0) return '0';
-  const plain = error >= smallestPlain && error < 1000;
-  return plain ? String(Number(error.toPrecision(digits))) : formatPower(error, digits);
-}
 
 /** 1, 2 or 5 times a power of ten. */
 const isRound = (tick: number) => ['1', '2', '5'].includes(tick.toExponential()[0]);
@@ -66,4 +56,21 @@ export function expectedLine({ points }: ConvergenceSeries, order: number): Conv
   const first = points[0];
   const last = points[points.length - 1];
   return [first, { size: last.size, error: first.error * (first.size / last.size) ** order }];
+}
+
+export type ConvergencePlace = { series: number; point: number };
+
+/** The point that lies nearest to a place of the drawing. */
+export function nearestPlace(
+  series: readonly ConvergenceSeries[],
+  scale: ConvergenceScale,
+  at: { x: number; y: number },
+): ConvergencePlace | null {
+  const places = series.flatMap(({ points }, index) =>
+    points.map(({ size, error }, point) => ({
+      place: { series: index, point },
+      distance: Math.hypot(scale.x(size) - at.x, scale.y(error) - at.y),
+    })),
+  );
+  return least(places, ({ distance }) => distance)?.place ?? null;
 }

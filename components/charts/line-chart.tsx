@@ -1,9 +1,12 @@
+import { extent, minIndex } from 'd3-array';
 import { scaleLinear, scaleUtc } from 'd3-scale';
 import { line } from 'd3-shape';
 import { useState, type CSSProperties, type KeyboardEvent, type PointerEvent } from 'react';
 import { StyleSheet, View } from 'react-native';
+import Svg, { Circle, Line, Path, Rect } from 'react-native-svg';
 import { Text } from '@/components/ui/text';
-import { color, font, fontSize, space } from '@/constants/theme';
+import { color, space } from '@/constants/theme';
+import { ChartLabel } from './chart-label';
 
 export type LinePoint = {
   /** Milliseconds since 1970 (UTC). */
@@ -30,14 +33,13 @@ const height = 220;
 const margin = { top: 12, right: 12, bottom: 26, left: 76 };
 
 function scalesOf(points: readonly LinePoint[], width: number) {
-  const times = points.map(({ at }) => at);
-  const values = points.flatMap(({ value }) => (value === null ? [] : [value]));
-  const [low, high] = [Math.min(...values), Math.max(...values)];
+  const [first = 0, last = 0] = extent(points, ({ at }) => at);
+  const [low = 0, high = 0] = extent(points, ({ value }) => value);
   // A line that does not move still needs an axis of some length.
   const room = high > low ? 0 : Math.abs(low) * 0.01 || 1;
   return {
     x: scaleUtc()
-      .domain([Math.min(...times), Math.max(...times)])
+      .domain([first, last])
       .range([margin.left, width - margin.right]),
     y: scaleLinear()
       .domain([low - room, high + room])
@@ -94,9 +96,9 @@ export function LineChart({ title, points, formatValue, markedWord }: LineChartP
         </Text>
         {points.some(({ marked }) => marked) ? (
           <View style={styles.legend}>
-            <svg width={10} height={10} aria-hidden>
-              <rect x={1} y={1} width={8} height={8} fill={color.brick} />
-            </svg>
+            <Svg width={10} height={10}>
+              <Rect x={1} y={1} width={8} height={8} fill={color.brick} />
+            </Svg>
             <Text size="small" tone="muted">
               {markedWord}
             </Text>
@@ -109,8 +111,7 @@ export function LineChart({ title, points, formatValue, markedWord }: LineChartP
 
 /** The index of the point whose place is nearest to a place on the axis. */
 function nearestTo(x: number, points: readonly LinePoint[], scales: Scales): number {
-  const distance = (index: number) => Math.abs(scales.x(points[index].at) - x);
-  return points.reduce((best, _, index) => (distance(index) < distance(best) ? index : best), 0);
+  return minIndex(points, ({ at }) => Math.abs(scales.x(at) - x));
 }
 
 type DrawingProps = Pick<LineChartProps, 'points' | 'formatValue'> & {
@@ -128,9 +129,9 @@ function Drawing({ points, scales: { x, y }, width, formatValue, chosen }: Drawi
     .y(({ value }) => y(value ?? 0))([...points]);
   const times = x.ticks(Math.max(2, Math.floor(width / 160)));
   return (
-    <svg width={width} height={height} aria-hidden>
+    <Svg width={width} height={height}>
       {y.ticks(4).map((tick) => (
-        <line
+        <Line
           key={tick}
           x1={margin.left}
           x2={width - margin.right}
@@ -140,17 +141,17 @@ function Drawing({ points, scales: { x, y }, width, formatValue, chosen }: Drawi
         />
       ))}
       {y.ticks(4).map((tick) => (
-        <Label key={tick} x={margin.left - 8} y={y(tick) + 4} anchor="end">
+        <ChartLabel key={tick} x={margin.left - 8} y={y(tick) + 4} anchor="end">
           {formatValue(tick)}
-        </Label>
+        </ChartLabel>
       ))}
       {times.map((tick) => (
-        <Label key={tick.getTime()} x={x(tick)} y={height - 8} anchor="middle">
+        <ChartLabel key={tick.getTime()} x={x(tick)} y={height - 8} anchor="middle">
           {day(tick)}
-        </Label>
+        </ChartLabel>
       ))}
       {chosen === null ? null : (
-        <line
+        <Line
           x1={x(points[chosen].at)}
           x2={x(points[chosen].at)}
           y1={margin.top}
@@ -158,36 +159,19 @@ function Drawing({ points, scales: { x, y }, width, formatValue, chosen }: Drawi
           stroke={color.edge}
         />
       )}
-      <path d={path ?? ''} stroke={color.lake} strokeWidth={1.75} fill="none" />
+      <Path d={path ?? ''} stroke={color.lake} strokeWidth={1.75} fill="none" />
       {points.map((point, index) => (
         <Point key={`${point.at} ${index}`} point={point} x={x(point.at)} y={y} />
       ))}
-    </svg>
-  );
-}
-
-type LabelProps = { x: number; y: number; anchor: 'end' | 'middle'; children: string };
-
-function Label({ x, y, anchor, children }: LabelProps) {
-  return (
-    <text
-      x={x}
-      y={y}
-      textAnchor={anchor}
-      fill={color.muted}
-      fontFamily={font.text}
-      fontSize={fontSize.small}
-    >
-      {children}
-    </text>
+    </Svg>
   );
 }
 
 /** A value that is missing is marked on the axis itself. */
 function Point({ point, x, y }: { point: LinePoint; x: number; y: Scales['y'] }) {
   const at = point.value === null ? height - margin.bottom : y(point.value);
-  if (point.marked) return <rect x={x - 4} y={at - 4} width={8} height={8} fill={color.brick} />;
-  return <circle cx={x} cy={at} r={2.5} fill={color.lake} />;
+  if (point.marked) return <Rect x={x - 4} y={at - 4} width={8} height={8} fill={color.brick} />;
+  return <Circle cx={x} cy={at} r={2.5} fill={color.lake} />;
 }
 
 /** A finger still scrolls the page up and down; sideways it reads along the line. */

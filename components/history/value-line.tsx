@@ -1,5 +1,6 @@
 import { useState } from 'react';
-import { LineChart, type LinePoint } from '@/components/charts/line-chart';
+import { LineChart } from '@/components/charts/lazy-charts';
+import type { LinePoint } from '@/components/charts/line-chart';
 import { Section } from '@/components/ui/card';
 import { LinkButton } from '@/components/ui/text-field';
 import { agreementText } from '@/constants/texts/agreement';

@@ -1,5 +1,5 @@
 import { StyleSheet, View } from 'react-native';
-import { ConvergenceChart } from '@/components/charts/convergence-chart';
+import { ConvergenceChart } from '@/components/charts/lazy-charts';
 import { Section } from '@/components/ui/card';
 import { Icon, type IconName } from '@/components/ui/icon';
 import { Notice } from '@/components/ui/notice';

@@ -1,5 +1,5 @@
 import { View } from 'react-native';
-import { errorText } from '@/components/charts/convergence-scale';
+import { errorText } from '@/components/charts/error-text';
 import { DataTable, type Column } from '@/components/ui/data-table';
 import { Text } from '@/components/ui/text';
 import { routeLabel } from '@/constants/texts/price';
