@@ -1,4 +1,4 @@
-import { Link } from '@/components/ui/link';
+import { BackLink } from '@/components/ui/back-link';
 import { Screen } from '@/components/ui/screen';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
 import { PlainPage } from '@/components/shell/permitted';
@@ -20,7 +20,7 @@ export type BookScreenProps = {
 /** The trades of one book, or of all of them. */
 export function BookScreen({ desk, userId, filter, onFilter }: BookScreenProps) {
   const books = useBooks(desk.id);
-  const back = <Link href={`/desks/${desk.id}/books`}>{booksText.back}</Link>;
+  const back = <BackLink href={`/desks/${desk.id}/books`} label={booksText.back} />;
   const { bookId } = filter;
   const book = books.data?.find(({ id }) => id === bookId);
   if (bookId !== null && books.data && !book)

@@ -5,7 +5,7 @@ import type { Evidence } from '@/components/price/evidence';
 import { GreeksSection } from '@/components/price/greeks-section';
 import { RecomputeSection } from '@/components/price/recompute-section';
 import { RoutesSection } from '@/components/price/routes-section';
-import { Link } from '@/components/ui/link';
+import { BackLink } from '@/components/ui/back-link';
 import { Notice } from '@/components/ui/notice';
 import { Screen } from '@/components/ui/screen';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
@@ -27,7 +27,7 @@ export function ValueScreen({ desk, position }: { desk: DeskAccess; position: st
   return (
     <Screen
       title={historyText.title}
-      overline={<Link href={`/desks/${desk.id}/history`}>{valueText.back}</Link>}
+      overline={<BackLink href={`/desks/${desk.id}/history`} label={valueText.back} />}
     >
       {error ? (
         <ErrorState {...errorOf(error)} onRetry={() => void refetch()} />
@@ -76,7 +76,7 @@ function ValuePage({ desk, value }: { desk: DeskAccess; value: HistoryValue }) {
         formatInstant(body.valuedAt, desk.timeZone).slice(0, 10),
       )}
       measure={1240}
-      overline={<Link href={ofTrade}>{valueText.ofTrade(body.tradeNumber)}</Link>}
+      overline={<BackLink href={ofTrade} label={valueText.ofTrade(body.tradeNumber)} />}
       subtitle={`${value.underlying.name} ${optionWords({ ...value, body }, desk.timeZone)}`}
     >
       {body.result.ok ? (

@@ -1,4 +1,4 @@
-import { Link } from '@/components/ui/link';
+import { BackLink } from '@/components/ui/back-link';
 import { Screen } from '@/components/ui/screen';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
 import { marketDataText, marketEditorText } from '@/constants/texts/market-data';
@@ -19,7 +19,7 @@ export function NewSnapshotScreen({ desk, userId, onSaved }: NewSnapshotScreenPr
     <Screen
       title={marketEditorText.newTitle}
       measure={1240}
-      overline={<Link href={`/desks/${desk.id}/market-data`}>{marketDataText.back}</Link>}
+      overline={<BackLink href={`/desks/${desk.id}/market-data`} label={marketDataText.back} />}
     >
       {underlyings ? (
         <MarketEditor

@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
+import { BackLink } from '@/components/ui/back-link';
 import { Button } from '@/components/ui/button';
 import { Card } from '@/components/ui/card';
 import { Link } from '@/components/ui/link';
@@ -50,7 +51,7 @@ export function SnapshotScreen({ desk, userId, snapshotId }: SnapshotScreenProps
 }
 
 function Back({ desk }: { desk: DeskAccess }) {
-  return <Link href={`/desks/${desk.id}/market-data`}>{marketDataText.back}</Link>;
+  return <BackLink href={`/desks/${desk.id}/market-data`} label={marketDataText.back} />;
 }
 
 type PageProps = { desk: DeskAccess; userId: string; snapshot: Snapshot };

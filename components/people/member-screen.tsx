@@ -1,8 +1,7 @@
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { PlainPage } from '@/components/shell/permitted';
-import { Icon } from '@/components/ui/icon';
-import { Link } from '@/components/ui/link';
+import { BackLink } from '@/components/ui/back-link';
 import { Notice } from '@/components/ui/notice';
 import { Screen } from '@/components/ui/screen';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
@@ -70,7 +69,7 @@ function MemberPage({ member }: { member: Member }) {
   return (
     <Screen
       title={member.user.name}
-      overline={<BackLink href={`/desks/${desk.id}/people`} />}
+      overline={<BackLink href={`/desks/${desk.id}/people`} label={peopleText.title} />}
       subtitle={member.user.email}
     >
       {done ? <Notice tone="moss" title={done} /> : null}
@@ -94,15 +93,6 @@ function MemberPage({ member }: { member: Member }) {
         />
       ) : null}
     </Screen>
-  );
-}
-
-function BackLink({ href }: { href: string }) {
-  return (
-    <Link href={href} className="back-link">
-      <Icon name="back" size={16} />
-      {peopleText.title}
-    </Link>
   );
 }
 

@@ -15,6 +15,7 @@ const allItems: readonly Item[] = [
   { name: 'books', icon: 'books', permission: 'read-desk' },
   { name: 'market-data', icon: 'market-data', permission: 'read-desk' },
   { name: 'policies', icon: 'policies', permission: 'read-desk' },
+  { name: 'studies', icon: 'studies', permission: 'read-desk' },
   { name: 'history', icon: 'history', permission: 'read-desk' },
   { name: 'chain', icon: 'chain', permission: 'export-history' },
   { name: 'people', icon: 'people', permission: 'read-desk' },
@@ -44,20 +45,22 @@ const barItems = (desk: DeskAccess) =>
 const overflowItems = (desk: DeskAccess) =>
   itemsFor(desk).filter((_, index, all) => !isInBar(index, all.length));
 
-/** A trade is reached from its book. */
-const isCurrent = (name: Item['name'], section: string) =>
-  section === name || (name === 'books' && section === 'trades');
-
 type ItemsProps = { desk: DeskAccess; items: readonly Item[]; className: string };
 
+/** The item that a section is reached by: a trade by its book, what the bar lacks by its last item. */
+function currentOf(items: readonly Item[], section: string): string {
+  const name = section === 'trades' ? 'books' : section;
+  return items.some((item) => item.name === name) ? name : 'more';
+}
+
 function Items({ desk, items, className }: ItemsProps) {
-  const section = sectionOf(usePathname());
+  const current = currentOf(items, sectionOf(usePathname()));
   return items.map(({ name, icon }) => (
     <Link
       key={name}
       href={`/desks/${desk.id}/${name}`}
       className={className}
-      current={isCurrent(name, section)}
+      current={name === current}
     >
       <Icon name={icon} />
       <span>{shellText.items[name]}</span>

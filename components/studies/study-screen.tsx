@@ -1,4 +1,5 @@
 import { StyleSheet, View } from 'react-native';
+import { BackLink } from '@/components/ui/back-link';
 import { Button } from '@/components/ui/button';
 import { Card } from '@/components/ui/card';
 import { Link } from '@/components/ui/link';
@@ -27,7 +28,7 @@ export function StudyScreen({ desk, studyId, userId }: StudyScreenProps) {
   return (
     <Screen
       title={studiesText.title}
-      overline={<Link href={`/desks/${desk.id}/studies`}>{studiesText.back}</Link>}
+      overline={<BackLink href={`/desks/${desk.id}/studies`} label={studiesText.back} />}
     >
       {error ? (
         <ErrorState {...errorOf(error)} onRetry={() => void refetch()} />
@@ -39,19 +40,22 @@ export function StudyScreen({ desk, studyId, userId }: StudyScreenProps) {
 }
 
 function StudyPage({ desk, study, userId }: { desk: DeskAccess; study: Study; userId: string }) {
-  const { underlying, quote, routes } = study;
+  const { underlying, quote, trade, routes } = study;
   const terms = `${underlying.name} ${optionTerms(study, underlying.priceDecimals)}`;
   const shares = routes.some(({ name }) => name === study.reference.method.name);
   return (
     <Screen
       title={studiesText.question(routes.map(({ name }) => routeLabel(name)))}
       measure={1240}
-      overline={<Link href={`/desks/${desk.id}/studies`}>{studiesText.back}</Link>}
-      subtitle={`${study.number} · ${studiesText.of(study.source, quote?.number ?? null)} · ${terms}`}
+      overline={<BackLink href={`/desks/${desk.id}/studies`} label={studiesText.back} />}
+      subtitle={`${study.number} · ${studiesText.of(study.source, quote?.number ?? trade?.number ?? null)} · ${terms}`}
       actions={<Acts desk={desk} study={study} />}
     >
       {quote ? (
         <Link href={`/desks/${desk.id}/quotes/${quote.id}`}>{studiesText.quote(quote.number)}</Link>
+      ) : null}
+      {trade ? (
+        <Link href={`/desks/${desk.id}/trades/${trade.id}`}>{studiesText.trade(trade.number)}</Link>
       ) : null}
       <Card style={styles.head}>
         <Text weight="semibold" style={styles.state}>

@@ -2,9 +2,9 @@ import { zodResolver } from '@hookform/resolvers/zod';
 import { useRouter, type Href } from 'expo-router';
 import { FormProvider, useForm } from 'react-hook-form';
 import { ActionBar } from '@/components/ui/action-bar';
+import { BackLink } from '@/components/ui/back-link';
 import { Button } from '@/components/ui/button';
 import { Section } from '@/components/ui/card';
-import { Link } from '@/components/ui/link';
 import { Notice } from '@/components/ui/notice';
 import { Screen } from '@/components/ui/screen';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
@@ -32,7 +32,7 @@ export function AmendScreen({ desk, userId, tradeId }: AmendScreenProps) {
     <Screen
       title={trade ? tradeFormText.amendTitle(trade.number) : tradeText.title}
       measure={720}
-      overline={<Link href={href}>{tradeFormText.backToTrade}</Link>}
+      overline={<BackLink href={href} label={tradeFormText.backToTrade} />}
       subtitle={trade ? tradeTerms(trade) : undefined}
     >
       {trade ? (

@@ -6,9 +6,9 @@ import { AgreementStrip } from '@/components/charts/agreement-strip';
 import { positionWords } from '@/components/price/answer-card';
 import { summaryAgreement, summaryTerms } from '@/components/quotes/quote-summary';
 import { ActionBar } from '@/components/ui/action-bar';
+import { BackLink } from '@/components/ui/back-link';
 import { Button } from '@/components/ui/button';
 import { Section } from '@/components/ui/card';
-import { Link } from '@/components/ui/link';
 import { Notice } from '@/components/ui/notice';
 import { Screen } from '@/components/ui/screen';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
@@ -43,7 +43,9 @@ export function ProposeScreen({ desk, userId, quoteId }: ProposeScreenProps) {
     <Screen
       title={tradeFormText.proposeTitle}
       measure={720}
-      overline={<Link href={`/desks/${desk.id}/quotes/${quoteId}`}>{tradeFormText.back}</Link>}
+      overline={
+        <BackLink href={`/desks/${desk.id}/quotes/${quoteId}`} label={tradeFormText.back} />
+      }
       subtitle={quote.data ? tradeFormText.fromQuote(quote.data.number) : undefined}
     >
       {quote.data && books.data ? (

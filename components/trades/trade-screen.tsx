@@ -1,10 +1,10 @@
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { ActionBar } from '@/components/ui/action-bar';
+import { BackLink } from '@/components/ui/back-link';
 import { Badge } from '@/components/ui/badge';
 import { Button } from '@/components/ui/button';
 import { Section } from '@/components/ui/card';
-import { Link } from '@/components/ui/link';
 import { Notice } from '@/components/ui/notice';
 import { Screen } from '@/components/ui/screen';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
@@ -84,7 +84,9 @@ function TradePage({ desk, userId, trade }: TradePageProps) {
     <Screen
       title={tradeText.trade(trade.number)}
       measure={1240}
-      overline={<Link href={`/desks/${desk.id}/books/${trade.book.id}`}>{trade.book.code}</Link>}
+      overline={
+        <BackLink href={`/desks/${desk.id}/books/${trade.book.id}`} label={trade.book.code} />
+      }
       actions={wide && atHand.length > 0 ? acts : undefined}
     >
       {done ? <Notice tone="moss" title={done} /> : null}

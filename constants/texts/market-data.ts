@@ -6,7 +6,7 @@ export const marketDataText = {
   title: 'Market data',
   caption: 'Closes, newest day first',
   enter: 'Enter a close',
-  back: '← Market data',
+  back: 'Market data',
   stateFilter: 'Show',
   anyState: 'every close',
   statuses: { draft: 'waits for approval', approved: 'approved', superseded: 'superseded' },

@@ -3,7 +3,7 @@ export const policiesText = {
   title: 'Pricing policy',
   subtitle: 'Which routes price and check, how far they refine, and how far they may lie apart.',
   write: 'Write a policy',
-  back: '← Pricing policy',
+  back: 'Pricing policy',
   inForce: (number: number) => `In force: policy ${number}`,
   noneTitle: 'No policy in force',
   noneBody:
