@@ -1,5 +1,6 @@
-import { useId, useState, type ChangeEvent } from 'react';
+import { useRef, useState, type ChangeEvent } from 'react';
 import { StyleSheet, View } from 'react-native';
+import { Button } from '@/components/ui/button';
 import { Notice } from '@/components/ui/notice';
 import { LinkButton } from '@/components/ui/text-field';
 import { Text } from '@/components/ui/text';
@@ -28,7 +29,7 @@ export type HeldManifestProps = {
 
 /** Lets the chain be compared with what someone kept where nobody else could change it. */
 export function HeldManifest({ held, onHeld }: HeldManifestProps) {
-  const id = useId();
+  const input = useRef<HTMLInputElement>(null);
   const [unreadable, setUnreadable] = useState(false);
   const choose = async ({ target }: ChangeEvent<HTMLInputElement>) => {
     const file = target.files?.[0];
@@ -40,18 +41,26 @@ export function HeldManifest({ held, onHeld }: HeldManifestProps) {
   };
   return (
     <View style={styles.box}>
-      <label htmlFor={id}>
-        <Text weight="medium">{chainText.held}</Text>
-      </label>
+      <Text weight="medium">{chainText.held}</Text>
       <Text size="small" tone="muted">
         {chainText.heldBody}
       </Text>
       <input
-        id={id}
+        ref={input}
+        className="visually-hidden"
         type="file"
         accept=".json,application/json"
+        aria-label={chainText.held}
+        tabIndex={-1}
         onChange={(event) => void choose(event)}
       />
+      <View style={styles.start}>
+        <Button
+          kind="secondary"
+          label={chainText.chooseManifest}
+          onPress={() => input.current?.click()}
+        />
+      </View>
       {held ? (
         <View style={styles.line}>
           <Text tabular>{chainText.heldChosen(held.position)}</Text>
@@ -65,5 +74,6 @@ export function HeldManifest({ held, onHeld }: HeldManifestProps) {
 
 const styles = StyleSheet.create({
   box: { gap: space.xs },
+  start: { alignItems: 'flex-start', paddingTop: space.xs },
   line: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'baseline', gap: space.sm },
 });

@@ -2,9 +2,9 @@ import { useEffect, useState } from 'react';
 import { FormProvider, useController, useForm, useWatch, type Resolver } from 'react-hook-form';
 import { StyleSheet, View } from 'react-native';
 import { ActionBar } from '@/components/ui/action-bar';
+import { BackLink } from '@/components/ui/back-link';
 import { Button } from '@/components/ui/button';
 import { Section } from '@/components/ui/card';
-import { Link } from '@/components/ui/link';
 import { Notice } from '@/components/ui/notice';
 import { Screen } from '@/components/ui/screen';
 import { ChoiceField, SelectField } from '@/components/ui/select-field';
@@ -46,7 +46,7 @@ export function PolicyFormScreen({ desk, userId, onSaved }: PolicyFormScreenProp
     <Screen
       title={draft ? policyFormText.changeTitle(draft.number) : policyFormText.newTitle}
       measure={820}
-      overline={<Link href={`/desks/${desk.id}/policies`}>{policiesText.back}</Link>}
+      overline={<BackLink href={`/desks/${desk.id}/policies`} label={policiesText.back} />}
     >
       {policies.data && underlyings.data ? (
         <PolicyForm
@@ -213,12 +213,14 @@ function RefinementSection() {
           </View>
         </>
       ) : (
-        <NumberField
-          name="share"
-          label={policyFormText.share}
-          unit="%"
-          hint={policyFormText.shareHint}
-        />
+        <View style={styles.row}>
+          <NumberField
+            name="share"
+            label={policyFormText.share}
+            unit="%"
+            hint={policyFormText.shareHint}
+          />
+        </View>
       )}
     </Section>
   );

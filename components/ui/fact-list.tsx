@@ -32,5 +32,6 @@ const styles = StyleSheet.create({
   },
   ruled: { borderTopWidth: 1, borderTopColor: color.line },
   name: { flexBasis: 116, flexGrow: 0 },
-  value: { flexGrow: 1, flexShrink: 1, flexBasis: 160 },
+  // A hash breaks anywhere rather than widen the page.
+  value: { flexGrow: 1, flexShrink: 1, flexBasis: 160, minWidth: 0 },
 });

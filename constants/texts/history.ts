@@ -130,6 +130,7 @@ export const chainText = {
   heldBody:
     'A manifest that you kept holds a place of the chain and its hash, out of reach of whoever could change the database.',
   heldChosen: (position: number) => `Position ${position}, from the manifest`,
+  chooseManifest: 'Choose a manifest',
   heldUnreadable: 'This file is no manifest of an export. Choose the JSON file that came with one.',
   heldForget: 'Leave it out',
   anchorsTitle: 'Signed heads',

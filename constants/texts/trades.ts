@@ -127,7 +127,7 @@ export const tradeText = {
 
 export const tradeFormText = {
   proposeTitle: 'Propose trade',
-  amendTitle: (number: string) => `Amend trade ${number}`,
+  amendTitle: (number: string) => `Amend ${number}`,
   propose: 'Propose trade',
   amend: 'Propose the amendment',
   fromQuote: (number: string) => `On the terms of quote ${number}`,

@@ -43,6 +43,7 @@ export function parseDecimal(typed: string): Parsed<string> {
   if (!point.ok) return point;
   const magnitude = /^(.*\d\.?)\s*([km])$/i.exec(point.value);
   const digits = magnitude ? magnitude[1] : point.value;
+  if (text === '') return refuse('Give a number, such as 210.5.');
   if (!plainNumber.test(digits))
     return refuse(`“${typed.trim()}” is not a number; type digits, such as 210.5.`);
   const power = magnitude ? magnitudes[magnitude[2].toLowerCase()] : 0;
