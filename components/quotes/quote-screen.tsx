@@ -6,6 +6,7 @@ import { GreeksSection } from '@/components/price/greeks-section';
 import { RecomputeSection } from '@/components/price/recompute-section';
 import { RoutesSection } from '@/components/price/routes-section';
 import { ActionBar } from '@/components/ui/action-bar';
+import { BackLink } from '@/components/ui/back-link';
 import { Button } from '@/components/ui/button';
 import { Link } from '@/components/ui/link';
 import { Screen } from '@/components/ui/screen';
@@ -24,7 +25,7 @@ import { summaryTerms } from './quote-summary';
 
 export function QuoteScreen({ desk, quoteId }: { desk: DeskAccess; quoteId: string }) {
   const { data: quote, error, refetch } = useQuote(desk.id, quoteId);
-  const back = <Link href={`/desks/${desk.id}/quotes`}>{quotesText.back}</Link>;
+  const back = <BackLink href={`/desks/${desk.id}/quotes`} label={quotesText.back} />;
   if (quote) return <QuotePage desk={desk} quote={quote} />;
   return (
     <Screen title={quotesText.title} overline={back}>
@@ -88,7 +89,7 @@ function QuotePage({ desk, quote }: { desk: DeskAccess; quote: Quote }) {
     <Screen
       title={quotesText.quote(quote.number)}
       measure={1240}
-      overline={<Link href={`/desks/${desk.id}/quotes`}>{quotesText.back}</Link>}
+      overline={<BackLink href={`/desks/${desk.id}/quotes`} label={quotesText.back} />}
       actions={wide ? acts : undefined}
     >
       <Text tone="muted">{summaryTerms(quote)}</Text>
@@ -96,6 +97,9 @@ function QuotePage({ desk, quote }: { desk: DeskAccess; quote: Quote }) {
       <View style={styles.pair}>
         <View style={styles.half}>
           <RoutesSection evidence={evidence} />
+          {desk.permissions.includes('run-studies') ? (
+            <Link href={`/desks/${desk.id}/studies/new?quote=${quote.id}`}>{quotesText.study}</Link>
+          ) : null}
         </View>
         <View style={styles.half}>
           <GreeksSection evidence={evidence} />

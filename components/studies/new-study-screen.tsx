@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { TermsForm } from '@/components/ticket/terms-form';
+import { BackLink } from '@/components/ui/back-link';
 import { Button } from '@/components/ui/button';
 import { Section } from '@/components/ui/card';
 import { Link } from '@/components/ui/link';
@@ -20,29 +21,38 @@ import { ApiError } from '@/shared/api-client';
 import { errorOf } from '@/hooks/error-of';
 import { useQuote } from '@/hooks/use-quotes';
 import { useStartStudy } from '@/hooks/use-studies';
+import { useTrade } from '@/hooks/use-trades';
 import { useTicket } from '@/hooks/use-ticket';
 
 export type NewStudyScreenProps = {
   desk: DeskAccess;
   userId: string;
-  quoteId: string | null;
+  of: NewStudyOf;
   onStarted: (studyId: string) => void;
 };
 
+/** What the address names; terms of one's own are those of the ticket. */
+export type NewStudyOf =
+  | { kind: 'quote'; quoteId: string }
+  | { kind: 'trade'; tradeId: string; snapshotId: string | null }
+  | { kind: 'free' };
+
 type Source = StudyDraft['source'];
 
-export function NewStudyScreen({ desk, userId, quoteId, onStarted }: NewStudyScreenProps) {
+export function NewStudyScreen({ desk, userId, of, onStarted }: NewStudyScreenProps) {
   return (
     <Screen
       title={newStudyText.title}
       measure={860}
-      overline={<Link href={`/desks/${desk.id}/studies`}>{studiesText.back}</Link>}
+      overline={<BackLink href={`/desks/${desk.id}/studies`} label={studiesText.back} />}
     >
-      {quoteId === null ? (
+      {of.kind === 'free' ? (
         <OfFreeTerms desk={desk} userId={userId} onStarted={onStarted} />
-      ) : (
-        <OfQuote desk={desk} quoteId={quoteId} onStarted={onStarted} />
-      )}
+      ) : null}
+      {of.kind === 'quote' ? (
+        <OfQuote desk={desk} quoteId={of.quoteId} onStarted={onStarted} />
+      ) : null}
+      {of.kind === 'trade' ? <OfTrade desk={desk} source={of} onStarted={onStarted} /> : null}
     </Screen>
   );
 }
@@ -71,6 +81,28 @@ function OfQuote({ desk, quoteId, onStarted }: Start & { quoteId: string }) {
   );
 }
 
+type TradeSource = Extract<Source, { kind: 'trade' }>;
+
+function OfTrade({ desk, source, onStarted }: Start & { source: TradeSource }) {
+  const { data: trade, error, refetch } = useTrade(desk.id, source.tradeId);
+  if (error) return <ErrorState {...errorOf(error)} onRetry={() => void refetch()} />;
+  if (!trade) return <SkeletonRows rows={4} height={60} />;
+  return (
+    <>
+      <Section title={newStudyText.termsTitle}>
+        <Link href={`/desks/${desk.id}/trades/${trade.id}`}>
+          {newStudyText.ofTrade(trade.number)}
+        </Link>
+        <Text>{`${trade.underlying.name} ${optionTerms(trade, trade.underlying.priceDecimals)}`}</Text>
+        <Text size="small" tone="muted">
+          {newStudyText.tradeNote}
+        </Text>
+      </Section>
+      <Ladders desk={desk} source={source} exercise={trade.exercise} onStarted={onStarted} />
+    </>
+  );
+}
+
 const nothingTaken = () => undefined;
 
 function OfFreeTerms({ desk, userId, onStarted }: Start & { userId: string }) {
@@ -87,7 +119,7 @@ function OfFreeTerms({ desk, userId, onStarted }: Start & { userId: string }) {
         <Text size="small" tone="muted">
           {newStudyText.freeNote}
         </Text>
-        <TermsForm ticket={ticket} underlying={underlying} />
+        <TermsForm unitOnly ticket={ticket} underlying={underlying} />
       </Section>
       <Ladders
         desk={desk}

@@ -11,6 +11,8 @@ import type { DeskAccess } from '@/shared/contracts/sessions';
 import { studyDecisionSchema, type Study } from '@/shared/contracts/studies';
 import { formatInstant } from '@/shared/format/dates';
 import { errorOf } from '@/hooks/error-of';
+import { forgetForm, keepForm, readKeptForm } from '@/hooks/kept-form';
+import { storeKey } from '@/hooks/local-store';
 import { useStudyAct } from '@/hooks/use-studies';
 
 export type StudyDecisionProps = { desk: DeskAccess; study: Study; userId: string };
@@ -33,7 +35,7 @@ export function StudyDecision({ desk, study, userId }: StudyDecisionProps) {
   return (
     <Section title={studiesText.decisionTitle}>
       {mayDecide && !own ? (
-        <DecisionForm desk={desk} study={study} />
+        <DecisionForm desk={desk} study={study} userId={userId} />
       ) : (
         <Text tone="muted">{mayDecide ? studiesText.ownStudy : studiesText.waitsForOfficer}</Text>
       )}
@@ -41,14 +43,25 @@ export function StudyDecision({ desk, study, userId }: StudyDecisionProps) {
   );
 }
 
-function DecisionForm({ desk, study }: { desk: DeskAccess; study: Study }) {
-  const [comment, setComment] = useState('');
+/** A comment that outlives a reload, until the decision is on record. */
+function useKeptComment(keptAs: string) {
+  const [comment, setComment] = useState(() => readKeptForm(keptAs, { comment: '' }).comment);
+  const change = (text: string) => {
+    setComment(text);
+    keepForm(keptAs, { comment: text });
+  };
+  return [comment, change] as const;
+}
+
+function DecisionForm({ desk, study, userId }: StudyDecisionProps) {
+  const keptAs = storeKey(`study.${study.id}`, userId, desk.id);
+  const [comment, setComment] = useKeptComment(keptAs);
   const [error, setError] = useState<string>();
   const act = useStudyAct(desk.id, study.id);
   const decide = (kind: 'sign-off' | 'send-back') => {
     const read = studyDecisionSchema.safeParse({ version: study.version, comment });
     setError(read.error?.issues.at(0)?.message);
-    if (read.success) act.mutate({ kind, ...read.data });
+    if (read.success) act.mutate({ kind, ...read.data }, { onSuccess: () => forgetForm(keptAs) });
   };
   const under = act.isPending ? act.variables?.kind : null;
   return (

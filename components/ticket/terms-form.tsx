@@ -13,16 +13,26 @@ import { ContractFields } from './contract-fields';
 import { CloseNote, MarketField } from './market-field';
 import { TermField } from './term-field';
 
-export type TermsFormProps = { ticket: Ticket; underlying: Underlying };
+export type TermsFormProps = {
+  ticket: Ticket;
+  underlying: Underlying;
+  /** Only what the value of one unit depends on: nothing of a position. */
+  unitOnly?: boolean;
+};
 
 const rareFields: readonly TicketField[] = ['rate', 'yield', 'contractSize', 'note'];
+
+/** Terms of a position that are wrong are shown even where only a unit is priced. */
+const hasPositionError = ({ quantity, contractSize, note }: FieldErrors) =>
+  [quantity, contractSize, note].some((error) => error !== undefined);
 
 const hasRareError = (errors: FieldErrors) =>
   rareFields.some((field) => errors[field] !== undefined);
 
 /** The terms in pairs; on a phone the rarer ones are folded until wanted or wrong. */
-export function TermsForm({ ticket, underlying }: TermsFormProps) {
+export function TermsForm({ ticket, underlying, unitOnly: asked = false }: TermsFormProps) {
   const wide = useWide();
+  const unitOnly = asked && !hasPositionError(ticket.errors);
   const [unfolded, setUnfolded] = useState(false);
   const rareShown = wide || unfolded || hasRareError(ticket.errors);
   return (
@@ -32,9 +42,13 @@ export function TermsForm({ ticket, underlying }: TermsFormProps) {
         <ContractFields ticket={ticket} underlying={underlying} />
         <MarketField ticket={ticket} underlying={underlying} field="spot" />
         <MarketField ticket={ticket} underlying={underlying} field="volatility" />
-        <DirectionField ticket={ticket} />
-        <TermField ticket={ticket} field="quantity" label={ticketText.quantity} />
-        {rareShown ? <RareFields ticket={ticket} underlying={underlying} /> : null}
+        {unitOnly ? null : <DirectionField ticket={ticket} />}
+        {unitOnly ? null : (
+          <TermField ticket={ticket} field="quantity" label={ticketText.quantity} />
+        )}
+        {rareShown ? (
+          <RareFields ticket={ticket} underlying={underlying} unitOnly={unitOnly} />
+        ) : null}
       </View>
       {wide ? null : (
         <View style={styles.fold}>
@@ -43,7 +57,9 @@ export function TermsForm({ ticket, underlying }: TermsFormProps) {
             expanded={rareShown}
             onPress={() => setUnfolded(!rareShown)}
           />
-          {rareShown ? null : <RareSummary ticket={ticket} underlying={underlying} />}
+          {rareShown ? null : (
+            <RareSummary ticket={ticket} underlying={underlying} unitOnly={unitOnly} />
+          )}
         </View>
       )}
     </View>
@@ -87,14 +103,22 @@ function DirectionField({ ticket: { draft, dispatch } }: { ticket: Ticket }) {
   );
 }
 
-function RareFields({ ticket, underlying }: TermsFormProps) {
-  const { draft, dispatch, errors } = ticket;
+function RareFields({ ticket, underlying, unitOnly }: TermsFormProps) {
   return (
     <>
       <MarketField ticket={ticket} underlying={underlying} field="rate" />
       {underlying.kind === 'future' ? null : (
         <MarketField ticket={ticket} underlying={underlying} field="yield" />
       )}
+      {unitOnly ? null : <PositionFields ticket={ticket} underlying={underlying} />}
+    </>
+  );
+}
+
+function PositionFields({ ticket, underlying }: TermsFormProps) {
+  const { draft, dispatch, errors } = ticket;
+  return (
+    <>
       <TermField
         ticket={ticket}
         field="contractSize"
@@ -115,14 +139,14 @@ function RareFields({ ticket, underlying }: TermsFormProps) {
 }
 
 /** What the folded terms say, so that nothing that moves the price is out of sight. */
-function RareSummary({ ticket: { draft }, underlying }: TermsFormProps) {
+function RareSummary({ ticket: { draft }, underlying, unitOnly }: TermsFormProps) {
   const { texts } = draft;
   const carry =
     underlying.kind === 'future' ? [] : [`${ticketText.yield(underlying.kind)} ${texts.yield} %`];
   const words = [
     `${ticketText.rate} ${texts.rate} %`,
     ...carry,
-    `${texts.contractSize} ${underlying.unit}`,
+    ...(unitOnly ? [] : [`${texts.contractSize} ${underlying.unit}`]),
   ];
   return (
     <Text size="small" tone="muted" tabular style={styles.summary}>

@@ -25,6 +25,7 @@ export const quotesText = {
   useTerms: 'Use these terms',
   proposeTrade: 'Propose trade',
   back: 'All quotes',
+  study: 'Study how these routes converge',
   termsTitle: 'Terms and market',
   recordTitle: 'On record',
   underlying: 'Underlying',
