@@ -86,7 +86,7 @@ function Ways(props: AnswersProps) {
   const mayStudy = desk.permissions.includes('run-studies');
   const mayRun = desk.permissions.includes('start-runs');
   const refusal = mayRun ? noteRefusal(props) : null;
-  const study = `/desks/${desk.id}/studies/new?run=${run.id}&exception=${valuation.exception.id}`;
+  const study = `/desks/${desk.id}/studies/new?trade=${valuation.trade.id}&snapshot=${run.snapshot.id}`;
   if (!mayStudy && !mayRun)
     return (
       <Text size="small" tone="muted">

@@ -18,6 +18,7 @@ import type { Book } from '@/shared/contracts/books';
 import type { SnapshotSummary } from '@/shared/contracts/market-data';
 import type { Policy } from '@/shared/contracts/policies';
 import type { DeskAccess } from '@/shared/contracts/sessions';
+import { newIdempotencyKey } from '@/hooks/api';
 import { errorOf } from '@/hooks/error-of';
 import { useBooks } from '@/hooks/use-books';
 import { useSnapshots } from '@/hooks/use-market-data';
@@ -114,7 +115,7 @@ function RunForm({ desk, books, closes, policy, onStarted }: RunFormProps) {
 /** Sends the run once however often it is pressed, and sorts what the server says against it. */
 function useStart(deskId: string, onStarted: (runId: string) => void) {
   const { mutate, error, isPending } = useStartRun(deskId);
-  const [idempotencyKey, setKey] = useState(() => crypto.randomUUID());
+  const [idempotencyKey, setKey] = useState(newIdempotencyKey);
   const issues = error instanceof ApiError ? error.issues : [];
   const inForm = ['bookIds', 'snapshotId'];
   const fieldOf = (path: string) => path.split('.')[0];
@@ -132,7 +133,7 @@ function useStart(deskId: string, onStarted: (runId: string) => void) {
           onSuccess: ({ id }) => onStarted(id),
           // The server has answered: what is sent next is another request.
           onError: (failure) => {
-            if (failure instanceof ApiError && !failure.retryable) setKey(crypto.randomUUID());
+            if (failure instanceof ApiError && !failure.retryable) setKey(newIdempotencyKey());
           },
         },
       ),

@@ -4,6 +4,7 @@ import { TextAreaField } from '@/components/ui/text-field';
 import { exceptionText, runText, signOffText } from '@/constants/texts/runs';
 import { runSignOffSchema, type Run } from '@/shared/contracts/runs';
 import type { DeskAccess } from '@/shared/contracts/sessions';
+import { newIdempotencyKey } from '@/hooks/api';
 import { useReloadRun, useRerun, useRunAct } from '@/hooks/use-runs';
 import { bookCodes } from './run-words';
 import { useRunConfirmation } from './use-run-confirmation';
@@ -38,11 +39,11 @@ type RerunDialogProps = RunDialogProps & { onStarted: (runId: string) => void };
 
 export function RerunDialog({ desk, run, onClose, onStarted }: RerunDialogProps) {
   const { mutateAsync, isPending } = useRerun(desk.id, run.id);
-  const [idempotencyKey, setKey] = useState(() => crypto.randomUUID());
+  const [idempotencyKey, setKey] = useState(newIdempotencyKey);
   const reload = useReloadRun(desk.id, run.id);
   const { confirm, ...told } = useRunConfirmation(() => {
     // The server has answered: what is sent next is another request.
-    setKey(crypto.randomUUID());
+    setKey(newIdempotencyKey());
     return reload();
   });
   return (

@@ -19,7 +19,7 @@ import { useRunConfirmation } from './use-run-confirmation';
 /** Links a study of the trade's terms that has come to an end. */
 export function StudyAnswerDialog(props: AnswerDialogProps) {
   const { desk, run, valuation, onClose } = props;
-  const { terms, underlying, trade, exception } = valuation;
+  const { terms, underlying, trade } = valuation;
   const { data, error, refetch } = useStudiesOfTerms(desk.id, {
     ...terms,
     underlyingId: underlying.id,
@@ -34,7 +34,7 @@ export function StudyAnswerDialog(props: AnswerDialogProps) {
         data ? (
           <Button
             label={exceptionText.startStudy}
-            href={`/desks/${desk.id}/studies/new?run=${run.id}&exception=${exception.id}`}
+            href={`/desks/${desk.id}/studies/new?trade=${trade.id}&snapshot=${run.snapshot.id}`}
           />
         ) : undefined
       }
