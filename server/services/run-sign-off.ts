@@ -24,11 +24,11 @@ async function refuseUnanswered({ id, number }: ValuationRun, transaction: Trans
     { bind: { runId: id }, type: QueryTypes.SELECT, transaction },
   );
   if (open > 0)
-    refuse('open-exceptions', `Run ${number} has ${open} open exceptions; answer them first.`);
+    refuse('open-exceptions', `Run ${number} waits for answers to ${open} of its exceptions.`);
   if (sentBack > 0)
     refuse(
       'study-sent-back',
-      `Studies that answer ${sentBack} exceptions of run ${number} were sent back; run it again.`,
+      `What answers ${sentBack} of the exceptions of run ${number} was sent back; run it again.`,
     );
 }
 
