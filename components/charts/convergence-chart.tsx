@@ -63,8 +63,12 @@ export function ConvergenceChart(props: ConvergenceChartProps) {
   );
 }
 
+/** Until the room for it is measured. */
+const usualWidth = 390;
+
 function Drawing({ label, series, order, currency, sizeLabel }: ConvergenceChartProps) {
-  const scale = convergenceScale(series);
+  const [width, setWidth] = useState(usualWidth);
+  const scale = convergenceScale(series, width);
   const [place, setPlace] = useState<ConvergencePlace | null>(null);
   const read = place ? series[place.series]?.points[place.point] : undefined;
   const move = (event: KeyboardEvent) => {
@@ -75,15 +79,11 @@ function Drawing({ label, series, order, currency, sizeLabel }: ConvergenceChart
   };
   const point = (event: PointerEvent<HTMLDivElement>) => {
     const box = event.currentTarget.getBoundingClientRect();
-    const perPixel = frame.width / box.width;
-    const at = {
-      x: (event.clientX - box.left) * perPixel,
-      y: (event.clientY - box.top) * perPixel,
-    };
+    const at = { x: event.clientX - box.left, y: event.clientY - box.top };
     setPlace(nearestPlace(series, scale, at));
   };
   return (
-    <View>
+    <View onLayout={({ nativeEvent }) => setWidth(nativeEvent.layout.width)}>
       <div
         style={areaStyle}
         role="img"
@@ -96,7 +96,7 @@ function Drawing({ label, series, order, currency, sizeLabel }: ConvergenceChart
         onPointerDown={point}
         onPointerLeave={() => setPlace(null)}
       >
-        <Svg width="100%" viewBox={`0 0 ${frame.width} ${frame.height}`}>
+        <Svg width={width} height={frame.height}>
           <Axes scale={scale} series={series} currency={currency} sizeLabel={sizeLabel} />
           {series.map((one, index) => (
             <SeriesMarks
@@ -157,7 +157,7 @@ function Axes({
         <G key={tick}>
           <Line
             x1={frame.left}
-            x2={frame.width - frame.right}
+            x2={scale.width - frame.right}
             y1={scale.y(tick)}
             y2={scale.y(tick)}
             stroke={color.line}
@@ -172,7 +172,7 @@ function Axes({
           {tick}
         </ChartLabel>
       ))}
-      <ChartLabel x={frame.width - frame.right} y={bottom + 38} anchor="end">
+      <ChartLabel x={scale.width - frame.right} y={bottom + 38} anchor="end">
         {sizeLabel}
       </ChartLabel>
       <ChartLabel x={4} y={bottom + 38} anchor="start">

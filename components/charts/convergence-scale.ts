@@ -5,23 +5,23 @@ import { scaleLog } from 'd3-scale';
 export type ConvergencePoint = { size: number; error: number };
 export type ConvergenceSeries = { id: string; label: string; points: readonly ConvergencePoint[] };
 
-export const frame = { width: 460, height: 330, left: 58, right: 14, top: 12, bottom: 46 } as const;
+export const frame = { height: 320, left: 58, right: 14, top: 12, bottom: 46 } as const;
 
 /** A little room around the points. */
 const sizeRoom = 1.25;
 const errorRoom = 1.6;
 
-export function convergenceScale(series: readonly ConvergenceSeries[]) {
+export function convergenceScale(series: readonly ConvergenceSeries[], width: number) {
   const points = series.flatMap((one) => one.points);
   const [smallest = 1, largest = 1] = extent(points, ({ size }) => size);
   const [best = 1, worst = 1] = extent(points, ({ error }) => error);
   const x = scaleLog()
     .domain([smallest / sizeRoom, largest * sizeRoom])
-    .range([frame.left, frame.width - frame.right]);
+    .range([frame.left, width - frame.right]);
   const y = scaleLog()
     .domain([best / errorRoom, worst * errorRoom])
     .range([frame.height - frame.bottom, frame.top]);
-  return { x, y };
+  return { x, y, width };
 }
 
 export type ConvergenceScale = ReturnType<typeof convergenceScale>;

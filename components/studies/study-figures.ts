@@ -1,5 +1,5 @@
 /** How the figures of a study are written. */
-import { routeLabel } from '@/constants/texts/price';
+import { routeInSentence } from '@/constants/texts/price';
 import type { Study, StudyRowOnTheWire } from '@/shared/contracts/studies';
 import { formatErrorEstimate, formatNumber, formatPower, hardSpace } from '@/shared/format/numbers';
 
@@ -36,7 +36,7 @@ export function sizeText({ settings, size }: StudyRowOnTheWire): string {
 /** `heat grid, 1600 × 800` */
 export function referenceText({ reference }: Study): string {
   const { name, spaceSteps, timeSteps } = reference.method;
-  const label = routeLabel(name).toLowerCase();
+  const label = routeInSentence(name);
   return spaceSteps === undefined ? label : `${label}, ${spaceSteps} × ${timeSteps}`;
 }
 

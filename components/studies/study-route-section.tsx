@@ -4,7 +4,7 @@ import { Section } from '@/components/ui/card';
 import { Icon, type IconName } from '@/components/ui/icon';
 import { Notice } from '@/components/ui/notice';
 import { Text, type Tone } from '@/components/ui/text';
-import { routeLabel } from '@/constants/texts/price';
+import { routeInSentence, routeLabel } from '@/constants/texts/price';
 import { studiesText, studyChartText } from '@/constants/texts/studies';
 import { color, space } from '@/constants/theme';
 import { ladderSeries } from '@/pricing/contract';
@@ -50,7 +50,7 @@ export function StudyRouteSection({ study, route }: { study: Study; route: Study
         </View>
         <View style={styles.chart}>
           <ConvergenceChart
-            label={routeLabel(route.name)}
+            label={routeInSentence(route.name)}
             series={used.map((series) => ({
               id: series,
               label: used.length > 1 ? studiesText.series[series] : routeLabel(route.name),

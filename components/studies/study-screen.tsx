@@ -8,7 +8,7 @@ import { Notice } from '@/components/ui/notice';
 import { Screen } from '@/components/ui/screen';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
 import { Text } from '@/components/ui/text';
-import { routeLabel } from '@/constants/texts/price';
+import { routeInSentence } from '@/constants/texts/price';
 import { studiesText } from '@/constants/texts/studies';
 import { color, radius, space } from '@/constants/theme';
 import type { DeskAccess } from '@/shared/contracts/sessions';
@@ -45,7 +45,7 @@ function StudyPage({ desk, study, userId }: { desk: DeskAccess; study: Study; us
   const shares = routes.some(({ name }) => name === study.reference.method.name);
   return (
     <Screen
-      title={studiesText.question(routes.map(({ name }) => routeLabel(name)))}
+      title={studiesText.question(routes.map(({ name }) => routeInSentence(name)))}
       measure={1240}
       overline={<BackLink href={`/desks/${desk.id}/studies`} label={studiesText.back} />}
       subtitle={`${study.number} · ${studiesText.of(study.source, quote?.number ?? trade?.number ?? null)} · ${terms}`}

@@ -1,4 +1,4 @@
-import { View } from 'react-native';
+import { StyleSheet, View } from 'react-native';
 import { errorText } from '@/components/charts/error-text';
 import { DataTable, type Column } from '@/components/ui/data-table';
 import { Text } from '@/components/ui/text';
@@ -117,7 +117,7 @@ function Value({
   const text = valueText(value, decimals, reference);
   if (!pastLimit) return <SettledValue text={text} digits={settledDigits} />;
   return (
-    <View>
+    <View style={styles.end}>
       <Text tabular tone="brick">
         {text}
       </Text>
@@ -129,3 +129,5 @@ function Value({
     </View>
   );
 }
+
+const styles = StyleSheet.create({ end: { alignItems: 'flex-end' } });

@@ -13,6 +13,10 @@ const routeLabels: Record<MethodName, string> = {
 
 export const routeLabel = (name: MethodName): string => routeLabels[name];
 
+/** The same within a sentence; capitals that are no beginning stay. */
+export const routeInSentence = (name: MethodName): string =>
+  routeLabels[name].replace(/^[A-Z](?=[a-z])/, (first) => first.toLowerCase());
+
 export const priceText = {
   title: 'Price',
   trusted: 'Why it can be trusted',
