@@ -72,7 +72,7 @@ test('a trade is proposed, returned, amended and approved, never by one’s own 
   await expectSound(analyst.page);
   await act(analyst.page, 'Propose the amendment').click();
   await analyst.page.waitForURL(address);
-  await analyst.page.getByText('What the new version changes').waitFor();
+  await analyst.page.getByRole('heading', { name: 'What the new version changes' }).waitFor();
 
   await head.page.reload();
   await act(head.page, 'Approve').click();
