@@ -1,23 +1,13 @@
 import { useInfiniteQuery, useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { Verdict } from '@/pricing/contract';
-import {
-  answerByOverride,
-  answerByStudy,
-  cancelRun,
-  createRun,
-  getRun,
-  getRunException,
-  listRunExceptions,
-  listRuns,
-  listRunValuations,
-  rerunRun,
-  signOffRun,
-  type ExceptionalValuation,
-  type ExceptionKind,
-  type Run,
-  type RunDraft,
-  type RunStatus,
+import { endpoints } from '@/shared/contracts';
+import type {
+  ExceptionalValuation,
+  ExceptionKind,
+  Run,
+  RunDraft,
+  RunStatus,
 } from '@/shared/contracts/runs';
 import type { BodyOf } from '@/shared/endpoint';
 import { call } from './api';
@@ -43,7 +33,7 @@ export function useRuns(deskId: string, filter: RunFilter) {
     queryKey: [...listKey(deskId), filter],
     initialPageParam: undefined as string | undefined,
     queryFn: ({ pageParam, signal }) =>
-      call(listRuns, {
+      call(endpoints.listRuns, {
         params: { deskId },
         query: {
           cursor: pageParam,
@@ -65,7 +55,7 @@ export function useRuns(deskId: string, filter: RunFilter) {
 export function useRun(deskId: string, runId: string) {
   return useQuery({
     queryKey: runKey(deskId, runId),
-    queryFn: ({ signal }) => call(getRun, { params: { deskId, runId }, signal }),
+    queryFn: ({ signal }) => call(endpoints.getRun, { params: { deskId, runId }, signal }),
     refetchInterval: ({ state }) =>
       state.data && isActive(state.data.status) ? progressEveryMs : false,
   });
@@ -88,7 +78,7 @@ export function useRunExceptions(deskId: string, run: RunRows, filter: Exception
     queryKey: [...foundKey(deskId, run.id), 'exceptions', isActive(run.status), filter],
     initialPageParam: undefined as string | undefined,
     queryFn: ({ pageParam, signal }) =>
-      call(listRunExceptions, {
+      call(endpoints.listRunExceptions, {
         params: { deskId, runId: run.id },
         query: {
           cursor: pageParam,
@@ -110,7 +100,7 @@ export function useRunException(deskId: string, runId: string, exceptionId: stri
     queryKey: [...foundKey(deskId, runId), 'exception', exceptionId],
     enabled: exceptionId !== null,
     queryFn: ({ signal }) =>
-      call(getRunException, {
+      call(endpoints.getRunException, {
         params: { deskId, runId, exceptionId: exceptionId ?? '' },
         signal,
       }),
@@ -124,7 +114,7 @@ export function useRunValuations(deskId: string, run: RunRows, filter: ValueFilt
     queryKey: [...foundKey(deskId, run.id), 'valuations', isActive(run.status), filter],
     initialPageParam: undefined as string | undefined,
     queryFn: ({ pageParam, signal }) =>
-      call(listRunValuations, {
+      call(endpoints.listRunValuations, {
         params: { deskId, runId: run.id },
         query: {
           cursor: pageParam,
@@ -153,7 +143,7 @@ export function useStartRun(deskId: string) {
   const keep = useKeepRun(deskId);
   return useMutation({
     mutationFn: ({ idempotencyKey, body }: { idempotencyKey: string; body: RunDraft }) =>
-      call(createRun, { params: { deskId }, body, idempotencyKey }),
+      call(endpoints.createRun, { params: { deskId }, body, idempotencyKey }),
     onSuccess: keep,
   });
 }
@@ -164,7 +154,7 @@ export function useRerun(deskId: string, runId: string) {
   const keep = useKeepRun(deskId);
   return useMutation({
     mutationFn: (idempotencyKey: string) =>
-      call(rerunRun, { params: { deskId, runId }, idempotencyKey }),
+      call(endpoints.rerunRun, { params: { deskId, runId }, idempotencyKey }),
     onSuccess: (rerun) => {
       keep(rerun);
       void client.invalidateQueries({ queryKey: runKey(deskId, runId) });
@@ -172,15 +162,16 @@ export function useRerun(deskId: string, runId: string) {
   });
 }
 
-export type RunAct = { kind: 'cancel' } | { kind: 'sign-off'; body: BodyOf<typeof signOffRun> };
+export type RunAct =
+  { kind: 'cancel' } | { kind: 'sign-off'; body: BodyOf<typeof endpoints.signOffRun> };
 
 export function useRunAct(deskId: string, runId: string) {
   const keep = useKeepRun(deskId);
   return useMutation({
     mutationFn: (act: RunAct) => {
       const params = { deskId, runId };
-      if (act.kind === 'cancel') return call(cancelRun, { params });
-      return call(signOffRun, { params, body: act.body });
+      if (act.kind === 'cancel') return call(endpoints.cancelRun, { params });
+      return call(endpoints.signOffRun, { params, body: act.body });
     },
     onSuccess: keep,
   });
@@ -197,8 +188,8 @@ export function useReloadRun(deskId: string, runId: string) {
 }
 
 export type ExceptionAct =
-  | { kind: 'override'; body: BodyOf<typeof answerByOverride> }
-  | { kind: 'study'; body: BodyOf<typeof answerByStudy> };
+  | { kind: 'override'; body: BodyOf<typeof endpoints.answerByOverride> }
+  | { kind: 'study'; body: BodyOf<typeof endpoints.answerByStudy> };
 
 /** An answer changes the run's counts as well, and who may sign it off. */
 export function useAnswerException(deskId: string, runId: string, exceptionId: string) {
@@ -207,8 +198,8 @@ export function useAnswerException(deskId: string, runId: string, exceptionId: s
     mutationFn: (act: ExceptionAct): Promise<ExceptionalValuation> => {
       const params = { deskId, runId, exceptionId };
       return act.kind === 'override'
-        ? call(answerByOverride, { params, body: act.body })
-        : call(answerByStudy, { params, body: act.body });
+        ? call(endpoints.answerByOverride, { params, body: act.body })
+        : call(endpoints.answerByStudy, { params, body: act.body });
     },
     onSuccess: reload,
   });

@@ -1,8 +1,10 @@
+import { StyleSheet, View } from 'react-native';
 import { Section } from '@/components/ui/card';
 import { FactList, type Fact } from '@/components/ui/fact-list';
 import { Link } from '@/components/ui/link';
 import { valueText } from '@/constants/texts/history';
 import { routeLabel } from '@/constants/texts/price';
+import { space } from '@/constants/theme';
 import type { HistoryValue } from '@/shared/contracts/history';
 import type { DeskAccess } from '@/shared/contracts/sessions';
 import { formatInstant } from '@/shared/format/dates';
@@ -76,17 +78,21 @@ export function ValueSeal({ value, desk }: FactsProps) {
     { name: valueText.previous, value: entry.previous, mono: true },
   ];
   return (
-    <Section
-      title={valueText.sealTitle}
-      action={
-        value.before ? (
-          <Link href={`/desks/${desk.id}/history/${value.before.position}`}>
-            {valueText.before}
-          </Link>
-        ) : undefined
-      }
-    >
+    <Section title={valueText.sealTitle}>
       <FactList facts={facts} />
+      <View style={styles.links}>
+        <Link href={`/desks/${desk.id}/runs/${body.runId}`}>{valueText.openRun}</Link>
+        <Link href={`/desks/${desk.id}/trades/${body.tradeId}`}>{valueText.openTrade}</Link>
+        {value.before ? (
+          <Link href={`/desks/${desk.id}/history/${value.before.position}`}>
+            {valueText.openBefore}
+          </Link>
+        ) : null}
+      </View>
     </Section>
   );
 }
+
+const styles = StyleSheet.create({
+  links: { flexDirection: 'row', flexWrap: 'wrap', columnGap: space.lg, rowGap: space.xs },
+});

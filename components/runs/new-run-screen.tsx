@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { policyFacts } from '@/components/policies/policy-words';
+import { BackLink } from '@/components/ui/back-link';
 import { Button } from '@/components/ui/button';
 import { Section } from '@/components/ui/card';
 import { FactList } from '@/components/ui/fact-list';
@@ -37,7 +38,7 @@ export function NewRunScreen({ desk, onStarted }: NewRunScreenProps) {
     <Screen
       title={newRunText.title}
       measure={860}
-      overline={<Link href={`/desks/${desk.id}/runs`}>{runsText.back}</Link>}
+      overline={<BackLink href={`/desks/${desk.id}/runs`} label={runsText.back} />}
     >
       {books.data && closes.data && policies.data ? (
         <RunForm

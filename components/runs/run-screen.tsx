@@ -2,6 +2,7 @@ import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { ActionBar } from '@/components/ui/action-bar';
 import { Badge } from '@/components/ui/badge';
+import { BackLink } from '@/components/ui/back-link';
 import { Button } from '@/components/ui/button';
 import { Link } from '@/components/ui/link';
 import { LiveRegion } from '@/components/ui/live-region';
@@ -50,7 +51,7 @@ export function RunScreen(props: RunScreenProps) {
   return (
     <Screen
       title={runsText.title}
-      overline={<Link href={`/desks/${desk.id}/runs`}>{runsText.back}</Link>}
+      overline={<BackLink href={`/desks/${desk.id}/runs`} label={runsText.back} />}
     >
       {error ? (
         <ErrorState {...errorOf(error)} onRetry={() => void refetch()} />
@@ -76,7 +77,7 @@ function RunPage(props: RunPageProps) {
     <Screen
       title={heading}
       measure={1400}
-      overline={<Link href={`/desks/${desk.id}/runs`}>{runsText.back}</Link>}
+      overline={<BackLink href={`/desks/${desk.id}/runs`} label={runsText.back} />}
       subtitle={<HeadLine run={run} desk={desk} />}
       actions={wide ? acts : undefined}
     >

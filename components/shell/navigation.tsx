@@ -5,7 +5,7 @@ import { Icon, Mark, type IconName } from '@/components/ui/icon';
 import { Link } from '@/components/ui/link';
 import { shellText } from '@/constants/texts/shell';
 import type { DeskAccess } from '@/shared/contracts/sessions';
-import type { Permission } from '@/shared/permissions';
+import type { DeskRole, Permission } from '@/shared/permissions';
 
 type Item = { name: keyof typeof shellText.items; icon: IconName; permission: Permission | null };
 
@@ -15,6 +15,7 @@ const allItems: readonly Item[] = [
   { name: 'books', icon: 'books', permission: 'read-desk' },
   { name: 'market-data', icon: 'market-data', permission: 'read-desk' },
   { name: 'policies', icon: 'policies', permission: 'read-desk' },
+  { name: 'runs', icon: 'runs', permission: 'read-desk' },
   { name: 'studies', icon: 'studies', permission: 'read-desk' },
   { name: 'history', icon: 'history', permission: 'read-desk' },
   { name: 'chain', icon: 'chain', permission: 'export-history' },
@@ -32,18 +33,27 @@ const itemsFor = ({ permissions, suspended }: DeskAccess) =>
 /** The section of a desk's address: `/desks/<id>/quotes/<quote>` is in `quotes`. */
 export const sectionOf = (pathname: string): string => pathname.split('/')[3] ?? '';
 
-/** A phone has room for five: the first four, and the page that leads to the rest. */
+/** A phone has room for five: what a role opens most, and the page that leads to the rest. */
 const barLength = 5;
 
-const isInBar = (index: number, count: number) =>
-  count <= barLength || index < barLength - 1 || index === count - 1;
+const barOf: Record<DeskRole, readonly Item['name'][]> = {
+  analyst: ['ticket', 'quotes', 'books', 'market-data'],
+  'desk-head': ['ticket', 'quotes', 'books', 'runs'],
+  'risk-officer': ['books', 'market-data', 'runs', 'studies'],
+  auditor: ['books', 'runs', 'history', 'chain'],
+};
 
-const barItems = (desk: DeskAccess) =>
-  itemsFor(desk).filter((_, index, all) => isInBar(index, all.length));
+function splitItems(desk: DeskAccess) {
+  const items = itemsFor(desk);
+  if (items.length <= barLength) return { bar: items, overflow: [] };
+  const isInBar = ({ name }: Item) => name === 'more' || barOf[desk.role].includes(name);
+  return { bar: items.filter(isInBar), overflow: items.filter((item) => !isInBar(item)) };
+}
+
+const barItems = (desk: DeskAccess) => splitItems(desk).bar;
 
 /** What the bar has no room for; the page behind its last item lists it. */
-const overflowItems = (desk: DeskAccess) =>
-  itemsFor(desk).filter((_, index, all) => !isInBar(index, all.length));
+const overflowItems = (desk: DeskAccess) => splitItems(desk).overflow;
 
 type ItemsProps = { desk: DeskAccess; items: readonly Item[]; className: string };
 

@@ -10,6 +10,7 @@ export const shellText = {
     books: 'Books',
     'market-data': 'Market data',
     policies: 'Policy',
+    runs: 'Runs',
     studies: 'Studies',
     history: 'History',
     chain: 'Chain',
