@@ -83,6 +83,7 @@ export const studiesText = {
     return `${which}:${measured} ${verdictWords[verdict]}`;
   },
   started: 'started',
+  trade: (number: string) => `Trade ${number}`,
   quote: (number: string) => `Quote ${number}`,
   statuses: {
     queued: 'waiting',
@@ -93,9 +94,7 @@ export const studiesText = {
     'sent-back': 'sent back',
   } satisfies Record<StudyStatus, string>,
   question: (labels: readonly string[]) =>
-    labels.length === 1
-      ? `Does the ${labels[0].toLowerCase()} converge?`
-      : 'Do these methods converge?',
+    labels.length === 1 ? `Does the ${labels[0]} converge?` : 'Do these methods converge?',
   of: (kind: 'trade' | 'quote' | 'free', number: string | null) =>
     kind === 'free' || number === null ? 'Study of free terms' : `Study of ${kind} ${number}`,
   orderSentence,
@@ -143,7 +142,7 @@ export const studiesText = {
 } as const;
 
 export const studyChartText = {
-  title: (route: string) => `Error against size, ${route.toLowerCase()}`,
+  title: (route: string) => `Error against size, ${route}`,
   series: 'rows',
   error: (currency: string) => `error, ${currency}`,
   size: { grid: 'space steps', steps: 'steps' },
@@ -158,6 +157,9 @@ export const studyChartText = {
 export const newStudyText = {
   title: 'New study',
   ofQuote: (number: string) => `Quote ${number}`,
+  ofTrade: (number: string) => `Trade ${number}`,
+  tradeNote:
+    'Priced on an approved close, at the desk’s cut-off of its day, as a valuation run does.',
   termsTitle: 'What is studied',
   freeNote: 'The terms as they stand on your ticket; a change here is a change there.',
   methodsTitle: 'Methods and ladders',
