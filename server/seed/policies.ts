@@ -9,12 +9,18 @@ import type { Listed } from './quotes';
 const once: WriteOnce = (write) => sequelize.transaction(write);
 
 /** In money, for a whole position; small beside any premium of the demonstration. */
-const moneyTolerances: Record<string, string> = {
-  EUR: '250.00',
-  USD: '250.00',
-  SEK: '2500.00',
-  NOK: '2500.00',
+export const moneyTolerances: Record<string, string> = {
+  EUR: '50.00',
+  USD: '50.00',
+  SEK: '500.00',
+  NOK: '500.00',
 };
+
+/** Enough for most of what the desk trades, and no more. */
+export const firstSizes = {
+  'heat-crank-nicolson': { spaceSteps: 100, timeSteps: 50 },
+  'lattice-symmetric': { steps: 200 },
+} as const;
 
 const toleranceOf = ({ id, underlying }: Listed): [string, number] => [id, underlying.tolerance];
 
@@ -25,13 +31,7 @@ function draftOf(listed: readonly Listed[]): PolicyDraft {
     checkEuropean: 'heat-crank-nicolson',
     primaryAmerican: 'heat-crank-nicolson',
     checkAmerican: 'lattice-symmetric',
-    refinement: {
-      by: 'sizes',
-      sizes: {
-        'heat-crank-nicolson': { spaceSteps: 200, timeSteps: 100 },
-        'lattice-symmetric': { steps: 500 },
-      },
-    },
+    refinement: { by: 'sizes', sizes: firstSizes },
     unitTolerance: Object.fromEntries(listed.map(toleranceOf)),
     moneyTolerance: Object.fromEntries(currencies.map((one) => [one, moneyTolerances[one]])),
     reason: 'First policy of the desk, as agreed when it was set up',
@@ -51,7 +51,8 @@ export async function seedPolicies(
     {
       ...draft,
       refinement: { by: 'tolerance', share: 0.2 },
-      reason: 'Refine to a fifth of the tolerance instead of fixed sizes',
+      reason:
+        'Refine to a fifth of the tolerance: fixed sizes are too rough for the largest positions',
     },
     once,
   );

@@ -85,12 +85,20 @@ function marketAt({ market, priceDecimals }: SeedUnderlying, { move, assumed }: 
   return { ...market, ...assumed, spot: rounded(market.spot * (1 + move), priceDecimals) };
 }
 
+type QuoteTerms = Omit<QuoteDraft, 'indicativeValue'>;
+
 /** What the ticket showed: the browser prices with the same engine. */
-async function indicativeValue(terms: Omit<QuoteDraft, 'indicativeValue'>, actor: DeskActor) {
+async function indicativeValue(terms: QuoteTerms, actor: DeskActor) {
   const { contract, market } = pricingRequestOf(terms, actor.desk);
   const [{ result }] = await priceRoutes(contract, market);
   if (!result.ok) throw new Error(`A quote of the demonstration has no price: ${result.message}`);
   return result.value;
+}
+
+/** Saves a quote as a ticket would. */
+export async function saveQuote(actor: DeskActor, terms: QuoteTerms) {
+  const draft = { ...terms, indicativeValue: await indicativeValue(terms, actor) };
+  return createQuote(actor, draft, (write) => sequelize.transaction(write));
 }
 
 async function seedQuote(actor: DeskActor, listed: Listed, pattern: Pattern, pricedAt: Date) {
@@ -98,7 +106,7 @@ async function seedQuote(actor: DeskActor, listed: Listed, pattern: Pattern, pri
   const { moneyness, tenor, kind, exercise, direction, quantity, note } = pattern;
   const expiryDate = dateOfTenor(tenor, today(actor.desk));
   if (expiryDate === null) throw new Error(`${tenor} is no tenor.`);
-  const terms = {
+  await saveQuote(actor, {
     kind,
     exercise,
     direction,
@@ -110,9 +118,7 @@ async function seedQuote(actor: DeskActor, listed: Listed, pattern: Pattern, pri
     expiryDate,
     market: marketAt(underlying, pattern),
     pricedAt: pricedAt.toISOString(),
-  };
-  const draft = { ...terms, indicativeValue: await indicativeValue(terms, actor) };
-  await createQuote(actor, draft, (write) => sequelize.transaction(write));
+  });
 }
 
 /** Oldest first, the last one a few minutes ago. */

@@ -38,10 +38,18 @@ const oldestDealDays = 60;
 
 const pick = <Item>(items: readonly Item[], index: number): Item => items[index % items.length];
 
+type Zone = { timeZone: string };
+
+/** When it was agreed, and when its premium is due. */
+export function agreedDaysAgo({ timeZone }: Zone, days: number, time = '11:20') {
+  const day = addDays(dateInZone(Date.now(), timeZone), -days);
+  return {
+    tradedAt: new Date(instantInZone(day, time, timeZone)).toISOString(),
+    premiumDate: addDays(day, 2),
+  };
+}
+
 function proposalOf(quote: QuoteSummary, bookId: string, actor: DeskActor, index: number) {
-  const { timeZone } = actor.desk;
-  const today = dateInZone(Date.now(), timeZone);
-  const day = addDays(today, -1 - ((index * 7) % oldestDealDays));
   // What was really agreed lies a little beside the server's own value.
   const agreed = Math.abs(Number(quote.total)) * (1 + ((index % 5) - 1) / 100);
   return {
@@ -50,8 +58,11 @@ function proposalOf(quote: QuoteSummary, bookId: string, actor: DeskActor, index
     counterparty: pick(counterparties, index * 3),
     premiumAmount: agreed.toFixed(2),
     premiumCurrency: quote.underlying.currency,
-    premiumDate: addDays(day, 2),
-    tradedAt: new Date(instantInZone(day, `1${index % 6}:2${index % 10}`, timeZone)).toISOString(),
+    ...agreedDaysAgo(
+      actor.desk,
+      1 + ((index * 7) % oldestDealDays),
+      `1${index % 6}:2${index % 10}`,
+    ),
     note: index % 9 === 0 ? 'Agreed by phone, confirmed by letter' : '',
   };
 }

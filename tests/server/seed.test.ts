@@ -74,7 +74,19 @@ test('what it writes is what the screens need', async () => {
     const policies = `pricing_policies ${ofDesk}`;
     expect(await count(`${policies} AND status = 'approved'`)).toBe(1);
     expect(await count(`${policies} AND status = 'draft'`)).toBe(1);
+    const trades = `trades ${ofDesk}`;
+    expect(await count(`${trades} AND status = 'returned'`)).toBe(1);
+    expect(await count(`${trades} AND status = 'proposed'`)).toBe(4);
+    const runs = `valuation_runs ${ofDesk}`;
+    expect(await count(`${runs} AND status = 'signed-off'`)).toBeGreaterThanOrEqual(35);
+    expect(await count(`${runs} AND status = 'finished'`)).toBe(1);
   }
+  expect(await count('trades')).toBe(200);
+  const exceptions = 'run_exceptions';
+  expect(await count(`${exceptions} WHERE kind = 'disagree' AND state = 'open'`)).toBe(1);
+  expect(await count(`${exceptions} WHERE answer_kind = 'study'`)).toBeGreaterThanOrEqual(1);
+  expect(await count(`${exceptions} WHERE override_value IS NOT NULL`)).toBeGreaterThanOrEqual(1);
+  expect(await count("studies WHERE status = 'finished'")).toBeGreaterThanOrEqual(1);
   expect(await count('memberships WHERE suspended_at IS NOT NULL')).toBe(1);
   expect(await count('grants WHERE ends_on > current_date')).toBeGreaterThanOrEqual(1);
   expect(await count("quotes WHERE verdict = 'wide'")).toBeGreaterThanOrEqual(1);
