@@ -17,7 +17,7 @@ const pageSize = 50;
 const exceptionPageSize = 20;
 /** About as often as another chunk of trades is done. */
 const progressEveryMs = 700;
-const rowsEveryMs = 2_500;
+const rowsEveryMs = 1_500;
 
 const listKey = (deskId: string) => ['runs', deskId] as const;
 const runKey = (deskId: string, runId: string) => ['run', deskId, runId] as const;

@@ -98,7 +98,9 @@ function Ways(props: AnswersProps) {
       <View role="group" aria-label={exceptionText.answerTitle} style={styles.acts}>
         {mayStudy ? (
           <>
-            <Link href={study}>{exceptionText.startStudy}</Link>
+            <Link href={study} className="link-button">
+              {exceptionText.startStudy}
+            </Link>
             <LinkButton label={exceptionText.study} onPress={() => setOpen('study')} />
           </>
         ) : null}

@@ -18,7 +18,7 @@ import {
   formatQuantity,
 } from '@/shared/format/numbers';
 import { routeSizes } from '@/shared/format/terms';
-import { decimalsOf } from './run-words';
+import { tellingDecimals } from './run-words';
 
 type Figure = { role: 'primary' | 'check'; route: Route };
 
@@ -67,7 +67,7 @@ export function ExceptionFigures({
 
 const columnsOf = (valuation: RunValuation): Column<Figure>[] => {
   const { currency, unit } = valuation.underlying;
-  const decimals = decimalsOf(valuation);
+  const decimals = tellingDecimals(valuation);
   return [
     {
       id: 'route',
@@ -111,14 +111,13 @@ function apartFacts(valuation: RunValuation): Fact[] {
   const { primary, check } = valuation;
   if (!primary.result.ok || !check.result.ok) return [];
   const apart = check.result.value - primary.result.value;
-  return [
-    { name: exceptionText.apartLabel, value: formatDifference(apart, decimalsOf(valuation)) },
-  ];
+  const value = formatDifference(apart, tellingDecimals(valuation));
+  return [{ name: exceptionText.apartLabel, value }];
 }
 
 function factsOf(valuation: RunValuation): Fact[] {
   const { tolerance, total, before, underlying } = valuation;
-  const decimals = decimalsOf(valuation);
+  const decimals = tellingDecimals(valuation);
   return [
     ...apartFacts(valuation),
     { name: exceptionText.tolerance, value: formatQuantity(tolerance, 0, 12) },

@@ -149,7 +149,7 @@ const styles = StyleSheet.create({
   },
   filters: { flexDirection: 'row', flexWrap: 'wrap', gap: space.sm, flexShrink: 1 },
   field: { flexGrow: 1, flexShrink: 1, flexBasis: 160, minWidth: 150 },
-  cards: { flexDirection: 'row', flexWrap: 'wrap', gap: space.lg },
+  cards: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'flex-start', gap: space.lg },
   card: { flexGrow: 1, flexShrink: 1, flexBasis: 460, minWidth: 0 },
   more: { alignItems: 'center' },
 });

@@ -45,6 +45,7 @@ export function NewRunScreen({ desk, onStarted }: NewRunScreenProps) {
           desk={desk}
           books={books.data}
           closes={closes.data}
+          onEarlier={closes.hasNextPage ? () => void closes.fetchNextPage() : undefined}
           policy={policies.data.find(({ status }) => status === 'approved') ?? null}
           onStarted={onStarted}
         />
@@ -60,10 +61,12 @@ export function NewRunScreen({ desk, onStarted }: NewRunScreenProps) {
 type RunFormProps = NewRunScreenProps & {
   books: readonly Book[];
   closes: readonly SnapshotSummary[];
+  /** Reads closes of earlier days; undefined where all are there. */
+  onEarlier: (() => void) | undefined;
   policy: Policy | null;
 };
 
-function RunForm({ desk, books, closes, policy, onStarted }: RunFormProps) {
+function RunForm({ desk, books, closes, onEarlier, policy, onStarted }: RunFormProps) {
   const [chosen, setChosen] = useState<readonly string[]>(() =>
     books.length === 1 ? [books[0].id] : [],
   );
@@ -94,20 +97,24 @@ function RunForm({ desk, books, closes, policy, onStarted }: RunFormProps) {
         closes={closes}
         close={close}
         onClose={setCloseId}
+        onEarlier={onEarlier}
         error={start.issueAt('snapshotId')}
       />
       <PolicySection desk={desk} policy={policy} />
       <Section title={newRunText.willTitle}>
         <WillHappen books={picked.length} trades={trades} date={close?.date ?? null} />
         {start.failure ? <Notice tone="brick" title={start.failure} /> : null}
-        <Button
-          label={start.busy ? newRunText.starting : newRunText.act}
-          busy={start.busy}
-          disabled={!close || !policy || trades === 0}
-          onPress={() => {
-            if (close) start.send({ bookIds, snapshotId: close.id });
-          }}
-        />
+        <View style={styles.act}>
+          <Button
+            grow
+            label={start.busy ? newRunText.starting : newRunText.act}
+            busy={start.busy}
+            disabled={!close || !policy || trades === 0}
+            onPress={() => {
+              if (close) start.send({ bookIds, snapshotId: close.id });
+            }}
+          />
+        </View>
       </Section>
     </>
   );
@@ -184,17 +191,20 @@ function BooksSection({ books, chosen, onChosen, error }: BooksSectionProps) {
   );
 }
 
-type CloseSectionProps = {
-  desk: DeskAccess;
-  closes: readonly SnapshotSummary[];
+type CloseSectionProps = Pick<RunFormProps, 'desk' | 'closes' | 'onEarlier'> & {
   close: SnapshotSummary | undefined;
   onClose: (id: string) => void;
   error: string | undefined;
 };
 
-function CloseSection({ desk, closes, close, onClose, error }: CloseSectionProps) {
+function CloseSection({ desk, closes, onEarlier, close, onClose, error }: CloseSectionProps) {
   return (
-    <Section title={newRunText.closeTitle}>
+    <Section
+      title={newRunText.closeTitle}
+      action={
+        onEarlier ? <LinkButton label={newRunText.earlierCloses} onPress={onEarlier} /> : undefined
+      }
+    >
       {close ? (
         <View style={styles.close}>
           <SelectField
@@ -263,6 +273,7 @@ const styles = StyleSheet.create({
   book: { flexShrink: 1, minWidth: 0 },
   end: { marginLeft: 'auto' },
   close: { maxWidth: 360 },
+  act: { flexDirection: 'row', maxWidth: 360 },
   well: {
     gap: space.xs,
     padding: space.md,

@@ -72,9 +72,7 @@ export function RerunDialog({ desk, run, onClose, onStarted }: RerunDialogProps)
   );
 }
 
-type SignOffDialogProps = RunDialogProps & { onDone: () => void };
-
-export function SignOffDialog({ desk, run, onClose, onDone }: SignOffDialogProps) {
+export function SignOffDialog({ desk, run, onClose }: RunDialogProps) {
   const [comment, setComment] = useState('');
   const [complaint, setComplaint] = useState<string>();
   const { mutateAsync, isPending } = useRunAct(desk.id, run.id);
@@ -83,7 +81,7 @@ export function SignOffDialog({ desk, run, onClose, onDone }: SignOffDialogProps
     const read = runSignOffSchema.safeParse({ version: run.version, comment });
     setComplaint(read.error?.issues.at(0)?.message);
     if (read.success)
-      void confirm(() => mutateAsync({ kind: 'sign-off', body: read.data }), onDone);
+      void confirm(() => mutateAsync({ kind: 'sign-off', body: read.data }), onClose);
   };
   const values = signOffText.values(run.total);
   return (

@@ -68,7 +68,6 @@ function RunPage(props: RunPageProps) {
   const { desk, userId, run, view, onView, readAtMs } = props;
   const wide = useWide();
   const [open, setOpen] = useState<'rerun' | 'sign-off' | null>(null);
-  const [done, setDone] = useState<string | null>(null);
   const close = () => setOpen(null);
   const { maySignOff, hindrances } = signOffStanding(run, desk, userId);
   const acts = <Acts desk={desk} run={run} maySignOff={maySignOff} start={setOpen} />;
@@ -82,7 +81,6 @@ function RunPage(props: RunPageProps) {
       actions={wide ? acts : undefined}
     >
       {isActive(run.status) ? null : <LiveRegion text={heading} />}
-      {done ? <Notice tone="moss" title={done} /> : null}
       <Standing run={run} desk={desk} hindrances={hindrances} />
       <RunProgress run={run} desk={desk} readAtMs={readAtMs} />
       <ExceptionsSection
@@ -113,17 +111,7 @@ function RunPage(props: RunPageProps) {
       {open === 'rerun' ? (
         <RerunDialog desk={desk} run={run} onClose={close} onStarted={props.onRerun} />
       ) : null}
-      {open === 'sign-off' ? (
-        <SignOffDialog
-          desk={desk}
-          run={run}
-          onClose={close}
-          onDone={() => {
-            setDone(signOffText.done(run.number));
-            close();
-          }}
-        />
-      ) : null}
+      {open === 'sign-off' ? <SignOffDialog desk={desk} run={run} onClose={close} /> : null}
     </Screen>
   );
 }

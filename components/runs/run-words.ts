@@ -13,7 +13,6 @@ import type {
 } from '@/shared/contracts/runs';
 import { formatErrorEstimate, formatNumber, valueDecimals } from '@/shared/format/numbers';
 import { optionTerms } from '@/shared/format/terms';
-import { isActive } from '@/hooks/use-runs';
 
 export const statusTone: Record<RunStatus, BadgeProps['tone']> = {
   queued: 'muted',
@@ -71,6 +70,15 @@ export const valuedTerms = ({ underlying, terms }: RunValuation): string =>
 export const decimalsOf = ({ tolerance, underlying }: RunValuation): number =>
   valueDecimals(tolerance, underlying.priceDecimals);
 
+/** More decimals where both values would look the same although they differ. */
+export function tellingDecimals(valuation: RunValuation): number {
+  const { primary, check } = valuation;
+  const usual = decimalsOf(valuation);
+  if (!primary.result.ok || !check.result.ok) return usual;
+  const apart = Math.abs(check.result.value - primary.result.value);
+  return apart === 0 ? usual : Math.max(usual, valueDecimals(apart, 0));
+}
+
 export const agreementOf = (valuation: RunValuation): Agreement => ({
   routes: valuation.strip.map((route) => ({ ...route, label: routeLabel(route.name) })),
   tolerance: valuation.tolerance,
@@ -99,10 +107,8 @@ export function causeOf(valuation: RunValuation): string {
   return failures.length > 0 ? failures.join(' ') : findingOf(agreementOf(valuation));
 }
 
-/** Who said what became of it stays in sight where nothing can be changed any more. */
+/** Exceptions are answered once the run has ended, and no more once it is signed off. */
 export const isOpenForAnswers = ({ status }: Run): boolean => status === 'finished';
 
 export const runsAgain = ({ status }: Run): boolean =>
   status === 'finished' || status === 'cancelled';
-
-export const isWorkedOff = ({ status }: Run): boolean => !isActive(status);

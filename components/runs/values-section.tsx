@@ -93,9 +93,11 @@ function Values(props: ValuesSectionProps & { hidden: readonly string[] }) {
   const { data: rows, error, isError, hasNextPage, isFetchingNextPage } = values;
   if (isError && !rows)
     return <ErrorState {...errorOf(error)} onRetry={() => void values.refetch()} />;
-  if (!rows) return <SkeletonRows rows={8} height={56} />;
+  const filtered = filter.verdict !== null || filter.bookId !== null;
+  if (!rows || (rows.length === 0 && run.done > 0 && !filtered && !isError))
+    return <SkeletonRows rows={8} height={56} />;
   if (rows.length === 0)
-    return filter.verdict === null && filter.bookId === null ? (
+    return !filtered ? (
       <Text tone="muted">{valuesText.empty}</Text>
     ) : (
       <View style={styles.nothing}>

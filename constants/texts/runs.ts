@@ -49,7 +49,6 @@ export const runsText = {
     signedOff: 'signed off',
   },
   counted: (name: keyof RunCounts, count: number) => `${count} ${countWords[name]}`,
-  countName: countWords,
   exceptionsOf: (open: number, all: number) => {
     if (all === 0) return 'none';
     return open === 0 ? `${all}, all answered` : `${open} of ${all} open`;
@@ -65,12 +64,12 @@ export const newRunText = {
   noBooksTitle: 'The desk has no book yet',
   noBooksBody: 'A run values the live trades of books. A desk head opens the first one.',
   openBooks: 'Open the books',
-  chooseBook: 'Choose at least one book.',
   live: (count: number) => (count === 0 ? 'no live trade' : `${count} live`),
   allBooks: 'All books',
   closeTitle: 'On which close',
   close: 'Approved close',
   closeHint: 'Only closes that someone independent has approved, newest first.',
+  earlierCloses: 'Show earlier closes',
   latest: (date: string) => `${date}, the latest`,
   noCloseTitle: 'No close is approved yet',
   noCloseBody: 'A run stands on a close that a risk officer has approved.',
@@ -123,7 +122,6 @@ export const runText = {
       ? 'Nothing is valued yet, and nothing will be.'
       : `What has been valued so far stays in the history; the rest is not valued.`,
   cancelFoot: 'A cancelled run cannot be signed off; it can be run again.',
-  keepRunning: 'Let it run',
   cancelledBy: (name: string, at: string) => `Cancelled by ${name}, ${at}`,
   cancelledBody:
     'What was valued before stays in the history. Run it again to have every trade valued.',
@@ -134,7 +132,6 @@ export const runText = {
     `The same books (${books}) are valued on the close of ${date} once more, under the policy and the terms in force now.`,
   rerunAnswers: 'It answers those exceptions of this run whose routes then agree.',
   rerunFoot: 'It is a run of its own, which you start; this one stays as it is.',
-  reruns: 'Was run again',
   rerunIs: (number: string, state: string) => `Run ${number}, ${state}`,
 
   factsTitle: 'What it stands on',
@@ -166,7 +163,7 @@ export const runText = {
 export const exceptionText = {
   title: 'Exceptions',
   none: 'Nothing to answer: every value was checked by a second route, and they agree.',
-  noneSoFar: 'None so far.',
+  noneSoFar: 'No exceptions so far.',
   kinds: {
     failure: 'no value',
     disagree: 'disagree',
@@ -175,9 +172,9 @@ export const exceptionText = {
     wide: 'wide',
   } satisfies Record<ExceptionKind, string>,
   show: 'Show',
-  all: 'all, open ones first',
-  open: 'open ones only',
-  answered: 'answered ones only',
+  all: 'all',
+  open: 'open',
+  answered: 'answered',
   kind: 'Kind',
   anyKind: 'any kind',
   nothing: 'No exception fits both of these filters.',
@@ -188,12 +185,10 @@ export const exceptionText = {
   why: 'Show why',
   whyNot: 'Hide',
   figuresCaption: (trade: string) => `Routes of ${trade}`,
-  role: 'role',
   roles: { primary: 'values', check: 'checks' },
   route: 'route',
   value: (currency: string, unit: string) => `value, ${currency} / ${unit}`,
   estimate: '±',
-  sizes: 'sizes',
   noValue: 'no value',
   apartLabel: 'Apart',
   tolerance: 'Tolerance',
@@ -302,5 +297,4 @@ export const signOffText = {
   willAnchor: 'The heads of the chain are signed, so that later changes show.',
   foot: 'It is sealed with your name in the desk’s records, and cannot be undone.',
   decided: (name: string, at: string) => `Signed off by ${name}, ${at}`,
-  done: (number: string) => `Run ${number} is signed off.`,
 } as const;
