@@ -13,6 +13,7 @@ import {
 } from '@/shared/contracts/runs';
 import { route } from '../middleware/route';
 import * as answers from '../services/run-answers';
+import * as lists from '../services/run-lists';
 import * as signOff from '../services/run-sign-off';
 import * as valuations from '../services/run-valuations';
 import * as runs from '../services/runs';
@@ -24,10 +25,10 @@ export const runRoutes = [
   route(cancelRun, ({ actor, params }) => runs.cancelRun(actor, params.runId)),
   route(rerunRun, ({ actor, params, writeOnce }) => runs.rerunRun(actor, params.runId, writeOnce)),
   route(listRunValuations, ({ actor, params, query }) =>
-    valuations.listRunValuations(actor.desk, params.runId, query),
+    lists.listRunValuations(actor.desk, params.runId, query),
   ),
   route(listRunExceptions, ({ actor, params, query }) =>
-    valuations.listRunExceptions(actor.desk, params.runId, query),
+    lists.listRunExceptions(actor.desk, params.runId, query),
   ),
   route(getRunException, ({ actor, params }) =>
     valuations.getRunException(actor.desk, params.runId, params.exceptionId),

@@ -3,7 +3,8 @@ import os from 'node:os';
 import { threadPool } from '../thread-pool';
 import type { TaskFinding, ValuationTask } from '../threads/value';
 
-const pool = threadPool('value', 'valueTrades', os.availableParallelism());
+/** One processor is left to those who read meanwhile. */
+const pool = threadPool('value', 'valueTrades', Math.max(1, os.availableParallelism() - 1));
 
 /** So few at a time that all threads come to their end together. */
 const sliceSize = 10;

@@ -1,7 +1,5 @@
-/** What a run found, trade by trade, read from the chain: exceptions first, the gravest on top. */
+/** What a run found for trades, read from the chain, with the exceptions that it made of it. */
 import { QueryTypes, type Transaction } from 'sequelize';
-import { z } from 'zod';
-import type { Verdict } from '@/pricing/contract';
 import { valuationBodySchema, type ValuationBody } from '@/shared/contracts/chain-bodies';
 import type { RunException as ExceptionOnTheWire, RunValuation } from '@/shared/contracts/runs';
 import { AppError } from '@/shared/errors';
@@ -141,131 +139,9 @@ export async function readValuations(
   });
 }
 
-export async function findRun(desk: Desk, id: string): Promise<ValuationRun> {
-  const run = await ValuationRun.findOne({ where: { deskId: desk.id, id } });
-  if (!run) throw new AppError('not-found');
-  return run;
-}
-
-const encode = (key: readonly unknown[]) => Buffer.from(JSON.stringify(key)).toString('base64url');
-
-function decode<Key>(cursor: string, schema: z.ZodType<Key>): Key {
-  try {
-    return schema.parse(JSON.parse(Buffer.from(cursor, 'base64url').toString('utf8')));
-  } catch (error) {
-    if (!(error instanceof SyntaxError || error instanceof z.ZodError)) throw error;
-    const message = 'Take the cursor from the page before, unchanged.';
-    throw new AppError('validation-failed', [{ path: 'cursor', code: 'not-a-cursor', message }]);
-  }
-}
-
-type Page = { cursor?: string; limit: number };
-
-/** Reads the rows that keys were found for; keys are one longer than the page when there is more. */
-async function pageFor<Key extends { versionId: string }>(
-  run: ValuationRun,
-  keys: readonly Key[],
-  limit: number,
-  cursorOf: (key: Key) => readonly unknown[],
-) {
-  const shown = keys.slice(0, limit);
-  const last = shown.at(-1);
-  return {
-    items: await readValuations(
-      run,
-      shown.map(({ versionId }) => versionId),
-    ),
-    nextCursor: keys.length > limit && last ? encode(cursorOf(last)) : null,
-  };
-}
-
-type ValuationKey = { versionId: string; gravity: number; position: string };
-
-/** Trades with which nothing is wrong come after every gravity of exception. */
-const noGravity = 9;
-
-const valuationKeys = `
-  SELECT entry.trade_version_id AS "versionId", entry.position,
-    coalesce(exception.gravity, ${noGravity}) AS gravity
-  FROM chain_entries entry
-  LEFT JOIN run_exceptions exception ON exception.run_id = entry.run_id
-    AND exception.trade_version_id = entry.trade_version_id
-  WHERE entry.kind = 'valuation' AND entry.run_id = $runId AND entry.role = 'primary'
-    AND ($verdict::text IS NULL OR entry.verdict = $verdict)
-    AND ($bookId::uuid IS NULL OR entry.book_id = $bookId)
-    AND (coalesce(exception.gravity, ${noGravity}), entry.position)
-      > ($gravity::integer, $position::bigint)
-  ORDER BY gravity, entry.position LIMIT $rows`;
-
-const valuationCursor = z.tuple([z.number().int().min(0), z.string().regex(/^\d{1,18}$/)]);
-
-export async function listRunValuations(
-  desk: Desk,
-  runId: string,
-  query: Page & { verdict?: Verdict; bookId?: string },
-) {
-  const { cursor, limit, verdict = null, bookId = null } = query;
-  const run = await findRun(desk, runId);
-  const [gravity, position] = cursor === undefined ? [0, '0'] : decode(cursor, valuationCursor);
-  const keys = await sequelize.query<ValuationKey>(valuationKeys, {
-    bind: { runId, verdict, bookId, gravity, position, rows: limit + 1 },
-    type: QueryTypes.SELECT,
-  });
-  return pageFor(run, keys, limit, (key) => [key.gravity, key.position]);
-}
-
-type ExceptionKey = {
-  versionId: string;
-  rank: number;
-  gravity: number;
-  descent: string;
-  id: string;
-};
-
-const exceptionKeys = `
-  SELECT trade_version_id AS "versionId", (state = 'answered')::integer AS rank, gravity,
-    descent::text AS descent, id
-  FROM run_exceptions
-  WHERE run_id = $runId AND ($state::text IS NULL OR state = $state)
-    AND ($kind::text IS NULL OR kind = $kind)
-    AND ((state = 'answered')::integer, gravity, descent, id)
-      > ($rank::integer, $gravity::integer, $descent::numeric, $id::uuid)
-  ORDER BY rank, gravity, run_exceptions.descent, id LIMIT $rows`;
-
-const exceptionCursor = z.tuple([
-  z.number().int().min(0).max(1),
-  z.number().int().min(0),
-  z.string().regex(/^-(Infinity|\d{1,40}(\.\d{1,20})?)$|^0$/),
-  z.uuid(),
-]);
-
-const beforeAll = [0, 0, '0', '00000000-0000-4000-8000-000000000000'] as const;
-
-const isExceptional = (
+export const isExceptional = (
   row: RunValuation,
 ): row is RunValuation & { exception: ExceptionOnTheWire } => row.exception !== null;
-
-export async function listRunExceptions(
-  desk: Desk,
-  runId: string,
-  query: Page & { state?: string; kind?: string },
-) {
-  const { cursor, limit, state = null, kind = null } = query;
-  const run = await findRun(desk, runId);
-  const start = cursor === undefined ? beforeAll : decode(cursor, exceptionCursor);
-  const [rank, gravity, descent, id] = start;
-  const keys = await sequelize.query<ExceptionKey>(exceptionKeys, {
-    bind: { runId, state, kind, rank, gravity, descent, id, rows: limit + 1 },
-    type: QueryTypes.SELECT,
-  });
-  const page = await pageFor(run, keys, limit, (key) => [
-    key.rank,
-    key.gravity,
-    key.descent,
-    key.id,
-  ]);
-  return { ...page, items: page.items.filter(isExceptional) };
-}
 
 export async function readException(exception: RunException, transaction?: Transaction) {
   const run = await ValuationRun.findByPk(exception.runId, { transaction, rejectOnEmpty: true });

@@ -30,7 +30,7 @@ export type TaskFinding = {
 };
 
 /** Requests of people go first: on Linux, this lowers the calling thread alone. */
-const niceness = 10;
+const niceness = 5;
 os.setPriority(niceness);
 
 function valueRoute({ contract, market }: ValuationTask, route: RouteTask): ValuedRoute {
