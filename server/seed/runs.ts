@@ -14,7 +14,7 @@ import { listBooks } from '../services/books';
 import { listSnapshots } from '../services/market-data';
 import { answerByOverride, answerByStudy } from '../services/run-answers';
 import { signOffRun } from '../services/run-sign-off';
-import { listRunExceptions } from '../services/run-valuations';
+import { listRunExceptions } from '../services/run-lists';
 import { createRun, getRun } from '../services/runs';
 import { createStudy, getStudy, signOffStudy } from '../services/studies';
 import type { WriteOnce } from '../services/write-once';
