@@ -98,9 +98,9 @@ function Ways(props: AnswersProps) {
       <View role="group" aria-label={exceptionText.answerTitle} style={styles.acts}>
         {mayStudy ? (
           <>
-            <Link href={study} className="link-button">
-              {exceptionText.startStudy}
-            </Link>
+            <Text size="small">
+              <Link href={study}>{exceptionText.startStudy}</Link>
+            </Text>
             <LinkButton label={exceptionText.study} onPress={() => setOpen('study')} />
           </>
         ) : null}

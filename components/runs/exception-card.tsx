@@ -10,9 +10,10 @@ import { space } from '@/constants/theme';
 import type { ExceptionalValuation, Run } from '@/shared/contracts/runs';
 import type { DeskAccess } from '@/shared/contracts/sessions';
 import { formatMoney } from '@/shared/format/money';
+import { optionTerms } from '@/shared/format/terms';
 import { ExceptionAnswers } from './exception-answers';
 import { ExceptionFigures } from './exception-figures';
-import { agreementOf, causeOf, kindTone, valuedTerms } from './run-words';
+import { agreementOf, causeOf, kindTone } from './run-words';
 
 export type ExceptionCardProps = {
   desk: DeskAccess;
@@ -27,14 +28,19 @@ export type ExceptionCardProps = {
 /** One exception: what is wrong and by how much, the figures behind it, and what answers it. */
 export function ExceptionCard(props: ExceptionCardProps) {
   const { desk, valuation, open, onOpen } = props;
-  const { trade, exception, strip } = valuation;
+  const { trade, underlying, terms, exception, strip } = valuation;
   return (
     <Card style={styles.card}>
       <View style={styles.head}>
-        <Text style={styles.title}>
-          <Link href={`/desks/${desk.id}/trades/${trade.id}`}>{trade.number}</Link>{' '}
-          <Text weight="semibold">{valuedTerms(valuation)}</Text>
-        </Text>
+        <View style={styles.title}>
+          <Text>
+            <Link href={`/desks/${desk.id}/trades/${trade.id}`}>{trade.number}</Link>{' '}
+            <Text weight="semibold">{underlying.name}</Text>
+          </Text>
+          <Text size="small" tone="muted" tabular>
+            {optionTerms(terms, underlying.priceDecimals)}
+          </Text>
+        </View>
         <Badge label={exceptionText.kinds[exception.kind]} tone={kindTone[exception.kind]} />
       </View>
       {strip.length > 0 ? <AgreementStrip {...agreementOf(valuation)} size="card" /> : null}

@@ -3,6 +3,7 @@ import { Button } from '@/components/ui/button';
 import { SelectField } from '@/components/ui/select-field';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
 import { Heading, Text } from '@/components/ui/text';
+import { useWide } from '@/components/ui/use-wide';
 import { exceptionText, runsText } from '@/constants/texts/runs';
 import { space } from '@/constants/theme';
 import {
@@ -98,6 +99,7 @@ function Cards(props: ExceptionsSectionProps) {
   const { desk, userId, run, openId, filter, onOpen, onRerun } = props;
   const exceptions = useRunExceptions(desk.id, run, filter);
   const { data: rows, error, isError, hasNextPage, isFetchingNextPage } = exceptions;
+  const wide = useWide();
   const linked = useLinkedException(props, rows);
   if (isError && !rows)
     return <ErrorState {...errorOf(error)} onRetry={() => void exceptions.refetch()} />;
@@ -108,7 +110,11 @@ function Cards(props: ExceptionsSectionProps) {
     <>
       <View role="list" aria-label={exceptionText.caption} style={styles.cards}>
         {shown.map((valuation) => (
-          <View role="listitem" key={valuation.exception.id} style={styles.card}>
+          <View
+            role="listitem"
+            key={valuation.exception.id}
+            style={wide ? styles.half : styles.whole}
+          >
             <ExceptionCard
               desk={desk}
               userId={userId}
@@ -150,6 +156,7 @@ const styles = StyleSheet.create({
   filters: { flexDirection: 'row', flexWrap: 'wrap', gap: space.sm, flexShrink: 1 },
   field: { flexGrow: 1, flexShrink: 1, flexBasis: 160, minWidth: 150 },
   cards: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'flex-start', gap: space.lg },
-  card: { flexGrow: 1, flexShrink: 1, flexBasis: 460, minWidth: 0 },
+  whole: { width: '100%' },
+  half: { flexGrow: 1, flexShrink: 1, flexBasis: '45%', maxWidth: '49.4%', minWidth: 0 },
   more: { alignItems: 'center' },
 });

@@ -54,7 +54,7 @@ export const runColumns = (desk: DeskAccess): Column<RunSummary>[] => [
 function Act({ at, by, desk }: { at: string; by: string; desk: DeskAccess }) {
   return (
     <View>
-      <Text tabular>{formatInstant(at, desk.timeZone)}</Text>
+      <span className="unbroken">{formatInstant(at, desk.timeZone)}</span>
       <Text size="small" tone="muted">
         {by}
       </Text>
@@ -80,7 +80,7 @@ function Exceptions({ run: { exceptions, openExceptions, status } }: { run: RunS
   const open = openExceptions > 0 && status === 'finished';
   return (
     <Text tabular tone={open ? 'brick' : 'muted'} weight={open ? 'semibold' : 'regular'}>
-      {runsText.exceptionsOf(openExceptions, exceptions)}
+      <span className="unbroken">{runsText.exceptionsOf(openExceptions, exceptions)}</span>
     </Text>
   );
 }
