@@ -11,15 +11,20 @@ const standIn = (name) => ({ type: 'sourceFile', filePath: path.join(__dirname, 
  * is two fifths of the first script.
  */
 const unused = {
+  '@tanstack/query-core/build/modern': ['hydration', 'queriesObserver', 'streamedQuery'],
+  '@tanstack/react-query/build/modern': ['HydrationBoundary', 'useMutationState', 'useQueries'],
   'expo-router/build': [
     'fork/native-stack/createNativeStackNavigator',
     'layouts/Tabs',
+    'layouts/_web-modal',
     'layouts/experimental-stack',
     'layouts/stack-utils',
     'link/preview/HrefPreview',
     'native-tabs/NativeTabTrigger',
     'react-navigation/bottom-tabs',
     'screensFeatureFlags',
+    'views/Sitemap',
+    'views/useSitemap',
   ],
   'react-native-web/dist/exports': [
     ...['ActivityIndicator', 'Animated', 'Button', 'CheckBox', 'FlatList', 'Image'],
@@ -30,6 +35,7 @@ const unused = {
   ],
   'zod/v4': [
     'classic/from-json-schema',
+    'core/compile',
     'core/json-schema-generator',
     'core/json-schema-processors',
     'core/to-json-schema',

@@ -1,7 +1,9 @@
 /**
- * Stands in the web bundle for what this application never uses: native stacks, tab bars and link
- * previews of the router, views of react-native-web that have no place on its pages, JSON schemas
- * of zod, which only the server writes. What is left is what is asked for while loading.
+ * Stands in the web bundle for what this application never uses: native stacks, tab bars, site map
+ * and link previews of the router, hydration and parallel queries of react-query, views of
+ * react-native-web that have no place on its pages, JSON schemas of zod, which only the server
+ * writes, and its compiler, which the content policy forbids. What is left is what is asked for
+ * while loading.
  */
 const { createContext } = require('react');
 

@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
+import { OpenBookDialog } from '@/components/forms/lazy-forms';
 import { Badge } from '@/components/ui/badge';
 import { Button } from '@/components/ui/button';
 import { DataTable, type Column } from '@/components/ui/data-table';
@@ -15,7 +16,6 @@ import type { Book } from '@/shared/contracts/books';
 import type { DeskAccess } from '@/shared/contracts/sessions';
 import { errorOf } from '@/hooks/error-of';
 import { useBooks } from '@/hooks/use-books';
-import { OpenBookDialog } from './open-book-dialog';
 import { WaitingSection } from './waiting-section';
 
 /** The books of the desk, and above them what waits for someone. */

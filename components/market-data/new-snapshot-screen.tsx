@@ -1,3 +1,4 @@
+import { MarketEditor } from '@/components/forms/lazy-forms';
 import { BackLink } from '@/components/ui/back-link';
 import { Screen } from '@/components/ui/screen';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
@@ -5,7 +6,6 @@ import { marketDataText, marketEditorText } from '@/constants/texts/market-data'
 import type { DeskAccess } from '@/shared/contracts/sessions';
 import { errorOf } from '@/hooks/error-of';
 import { useUnderlyings } from '@/hooks/use-underlyings';
-import { MarketEditor } from './market-editor';
 
 export type NewSnapshotScreenProps = {
   desk: DeskAccess;

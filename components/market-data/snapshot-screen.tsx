@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
+import { MarketEditor, RestateDialog } from '@/components/forms/lazy-forms';
 import { BackLink } from '@/components/ui/back-link';
 import { Button } from '@/components/ui/button';
 import { Card } from '@/components/ui/card';
@@ -17,9 +18,7 @@ import { errorOf } from '@/hooks/error-of';
 import { useSnapshot } from '@/hooks/use-market-data';
 import { useUnderlyings } from '@/hooks/use-underlyings';
 import { ApproveDialog } from './approve-dialog';
-import { MarketEditor } from './market-editor';
 import { MarketTable } from './market-table';
-import { RestateDialog } from './restate-dialog';
 import { SnapshotState } from './snapshot-list-screen';
 import { WarningList } from './warning-list';
 

@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { PlainPage } from '@/components/shell/permitted';
+import { PermissionDialog, ReasonDialog, RoleDialog } from '@/components/forms/lazy-forms';
 import { BackLink } from '@/components/ui/back-link';
 import { Notice } from '@/components/ui/notice';
 import { Screen } from '@/components/ui/screen';
@@ -14,9 +15,8 @@ import { useSession } from '@/hooks/use-session';
 import { ApiError } from '@/shared/api-client';
 import type { Member } from '@/shared/contracts/people';
 import { rolesADeskHeadSets } from '@/shared/permissions';
-import { ReasonDialog, RoleDialog, type ReasonAct } from './act-dialogs';
+import type { ReasonAct } from './act-dialogs';
 import { MembershipSection, RoleSection, SingleChangesSection } from './member-sections';
-import { PermissionDialog } from './permission-dialog';
 import { StandingSection } from './standing-section';
 
 /** The act whose dialog is open. */

@@ -14,7 +14,7 @@ import { formatInstant } from '@/shared/format/dates';
 import { permissionSentence } from '@/shared/permissions';
 import type { OpenAct } from './member-screen';
 import { StateBadge } from './people-screen';
-import { changeable } from './permission-dialog';
+import { changeable } from './changeable';
 
 /** `start` is null for those who may not change this member: then no act is offered. */
 type SectionProps = { member: Member; start: ((act: OpenAct) => void) | null };

@@ -7,35 +7,15 @@ import { TextField } from '@/components/ui/text-field';
 import { memberText } from '@/constants/texts/people';
 import { newIdempotencyKey } from '@/hooks/api';
 import { useDesk } from '@/hooks/use-desk';
-import { permissionChangeSchema, type Member } from '@/shared/contracts/people';
+import { permissionChangeSchema } from '@/shared/contracts/people';
 import { permissionSchema } from '@/shared/contracts/sessions';
 import { dateInZone, dateOfTenor, isCalendarDate } from '@/shared/dates';
-import {
-  effectivePermissions,
-  permissions,
-  permissionSentence,
-  type Permission,
-  type PermissionChange,
-} from '@/shared/permissions';
+import { permissionSentence } from '@/shared/permissions';
 import { ActDialog } from './act-dialog';
 import { ReasonField, type MemberDialogProps } from './act-dialogs';
+import { changeable, type Effect } from './changeable';
 import { consequencesOfChange } from './consequences';
 import { useConfirmation } from './use-confirmation';
-
-type Effect = PermissionChange['effect'];
-
-/**
- * What can be withdrawn is what the person holds; what can be granted is what they lack, except
- * what was withdrawn from them: that comes back by ending the withdrawal.
- */
-export function changeable(member: Member, effect: Effect): Permission[] {
-  const held = effectivePermissions(member.role, member.changes);
-  if (effect === 'withdraw') return held;
-  const named = member.changes.map(({ permission }) => permission);
-  return permissions.filter(
-    (permission) => !held.includes(permission) && !named.includes(permission),
-  );
-}
 
 /** A day, a tenor such as `3m` counted from today, or nothing for no end. */
 const endsOnSchema = (today: string) =>

@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
+import { TradeActDialog } from '@/components/forms/lazy-forms';
 import { ActionBar } from '@/components/ui/action-bar';
 import { BackLink } from '@/components/ui/back-link';
 import { Badge } from '@/components/ui/badge';
@@ -21,7 +22,6 @@ import { useMinute } from '@/hooks/use-minute';
 import type { TradeAct } from '@/hooks/use-trades';
 import { useTrade } from '@/hooks/use-trades';
 import { TimeLine } from './time-line';
-import { TradeActDialog } from './trade-act-dialogs';
 import {
   DifferencesSection,
   EndSection,

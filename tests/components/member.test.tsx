@@ -109,13 +109,19 @@ beforeEach(() => {
 const button = (name: string | RegExp) => screen.getByRole('button', { name });
 const dialog = () => within(screen.getByRole('dialog'));
 
+/** The dialog is fetched when it is first opened. */
+async function start(act: string) {
+  await userEvent.click(button(act));
+  await screen.findByRole('dialog');
+}
+
 async function fill(label: string, text: string) {
   await userEvent.click(dialog().getByLabelText(label));
   await userEvent.paste(text);
 }
 
 async function fillGrant() {
-  await userEvent.click(button('Grant a permission'));
+  await start('Grant a permission');
   await userEvent.selectOptions(
     dialog().getByLabelText('Permission'),
     'Export the valuation history and verify the chain',
@@ -168,7 +174,7 @@ test('a version that is stale is read again, and what was typed is kept', async 
 
 test('a reason that is too short and a day that is past are said at their fields', async () => {
   await open('desk-head');
-  await userEvent.click(button('Grant a permission'));
+  await start('Grant a permission');
   await fill('Last day', '2020-01-01');
   await fill('Reason', 'short');
   await userEvent.click(dialog().getByRole('button', { name: 'Grant a permission' }));
@@ -186,7 +192,7 @@ test('what stands in the way of the whole act is said above the buttons', async 
     problem(422, 'validation-failed', [
       { path: '', code: 'last-desk-head', message: 'This is the desk’s last desk head.' },
     ]);
-  await userEvent.click(button('Suspend'));
+  await start('Suspend');
   await fill('Reason', 'On leave until spring');
   await userEvent.click(dialog().getByRole('button', { name: 'Suspend' }));
   expect(await dialog().findByText('This is the desk’s last desk head.')).toBeTruthy();

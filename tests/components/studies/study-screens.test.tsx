@@ -1,6 +1,6 @@
 /** A study as its readers meet it: rows that come, digits that settle, the verdict, the decision. */
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { render, screen, waitFor, within } from '@testing-library/react';
+import { act, render, screen, waitFor, within } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import { StudyScreen } from '@/components/studies/study-screen';
 import type { Contract, Market, MethodName } from '@/pricing/contract';
@@ -176,7 +176,7 @@ describe('the chart', () => {
     playServer(studyWith([grid]));
     open();
     const chart = await screen.findByRole('img', { name: /Error against size, heat grid/ });
-    chart.focus();
+    act(() => chart.focus());
     await userEvent.keyboard('{ArrowRight}');
     expect(screen.getByText(/^Heat grid, 100: error \d\.\de−\d EUR$/)).toBeTruthy();
     await userEvent.click(screen.getByRole('button', { name: 'show as table' }));

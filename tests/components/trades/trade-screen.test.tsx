@@ -55,7 +55,12 @@ beforeEach(() => {
 const acts = ['Approve', 'Return', 'Close trade', 'Record the end'];
 const offered = () => acts.filter((name) => screen.queryByRole('button', { name }) !== null);
 const dialog = () => within(screen.getByRole('dialog'));
-const press = (name: string) => userEvent.click(screen.getByRole('button', { name }));
+/** The dialog is fetched when it is first opened. */
+async function press(name: string) {
+  await userEvent.click(screen.getByRole('button', { name }));
+  await screen.findByRole('dialog');
+}
+
 const confirm = (name: string) => userEvent.click(dialog().getByRole('button', { name }));
 
 const live = () =>

@@ -1,5 +1,5 @@
 import { useRouter } from 'expo-router';
-import { PolicyFormScreen } from '@/components/policies/policy-form-screen';
+import { PolicyFormScreen } from '@/components/forms/lazy-forms';
 import { Permitted } from '@/components/shell/permitted';
 import { useDesk } from '@/hooks/use-desk';
 import { useSession } from '@/hooks/use-session';

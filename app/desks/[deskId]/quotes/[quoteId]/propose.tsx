@@ -1,6 +1,6 @@
 import { useLocalSearchParams } from 'expo-router';
 import { Permitted } from '@/components/shell/permitted';
-import { ProposeScreen } from '@/components/trades/propose-screen';
+import { ProposeScreen } from '@/components/forms/lazy-forms';
 import { useDesk } from '@/hooks/use-desk';
 import { useSession } from '@/hooks/use-session';
 

@@ -1,6 +1,6 @@
 import { useLocalSearchParams } from 'expo-router';
 import { Permitted } from '@/components/shell/permitted';
-import { AmendScreen } from '@/components/trades/amend-screen';
+import { AmendScreen } from '@/components/forms/lazy-forms';
 import { useDesk } from '@/hooks/use-desk';
 import { useSession } from '@/hooks/use-session';
 
