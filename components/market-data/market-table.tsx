@@ -7,7 +7,7 @@ import { Text } from '@/components/ui/text';
 import { marketTableText } from '@/constants/texts/market-data';
 import { space } from '@/constants/theme';
 import type { Snapshot } from '@/shared/contracts/market-data';
-import { formatNumber, formatPercent, formatQuantity } from '@/shared/format/numbers';
+import { formatNumber, formatPercent, formatQuantity, hardSpace } from '@/shared/format/numbers';
 
 type Quote = Snapshot['quotes'][number];
 type Row = Quote & { before: Market | null };
@@ -109,17 +109,19 @@ export function MarketTable({ snapshot }: { snapshot: Snapshot }) {
 /** One underlying on a phone. */
 function QuoteCard({ row }: { row: Row }) {
   const { symbol, name, currency, market, before } = row;
-  const was = before ? `, ${marketTableText.before} ${price(row, before)}` : '';
+  const was = before ? `, ${marketTableText.before}${hardSpace}${price(row, before)}` : '';
   const volatilityWas = before
-    ? `, ${marketTableText.before} ${formatPercent(before.volatility)}`
+    ? `, ${marketTableText.before}${hardSpace}${formatPercent(before.volatility)}`
     : '';
   return (
     <View style={styles.quote}>
       <View style={styles.line}>
-        <Text weight="semibold">{symbol}</Text>
-        <Text size="small" tone="muted" style={styles.name}>
-          {name}
-        </Text>
+        <View style={styles.name}>
+          <Text weight="semibold">{symbol}</Text>
+          <Text size="small" tone="muted">
+            {name}
+          </Text>
+        </View>
         <Text tabular>{moveText(market, before)}</Text>
       </View>
       <FactList
@@ -144,6 +146,6 @@ function QuoteCard({ row }: { row: Row }) {
 
 const styles = StyleSheet.create({
   quote: { gap: space.xs, paddingVertical: space.xs },
-  line: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'baseline', gap: space.sm },
-  name: { flexGrow: 1 },
+  line: { flexDirection: 'row', alignItems: 'baseline', gap: space.sm },
+  name: { flex: 1, minWidth: 0 },
 });

@@ -91,7 +91,12 @@ export function useMarketEditor(props: EditorProps) {
     if (code === 'stale-version') return setFailure(marketEditorText.stale);
     const others = issues.filter((issue) => {
       const field = fieldOfIssue(issue, body);
-      if (field !== null) form.setError(field, { type: 'server', message: issue.message });
+      if (field !== null)
+        form.setError(
+          field,
+          { type: 'server', message: issue.message },
+          { shouldFocus: issue === issues[0] },
+        );
       return field === null;
     });
     if (others.length > 0) setFailure(others[0].message);

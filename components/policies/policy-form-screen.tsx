@@ -111,7 +111,12 @@ function usePolicyForm({ desk, userId, draft, active, underlyings, onSaved }: Fo
     if (code === 'stale-version') return setFailure(policyFormText.stale);
     const others = issues.filter((issue) => {
       const field = fieldOfPath(issue.path);
-      if (field !== null) form.setError(field, { type: 'server', message: issue.message });
+      if (field !== null)
+        form.setError(
+          field,
+          { type: 'server', message: issue.message },
+          { shouldFocus: issue === issues[0] },
+        );
       return field === null;
     });
     setFailure(others.at(0)?.message ?? message);

@@ -33,7 +33,8 @@ export function useKeptSubmit<Values extends FieldValues, Read, Body>(
   function complain({ issues, message, retryable }: ApiError) {
     const fields = Object.keys(form.getValues());
     const atFields = issues.filter(({ path }) => fields.includes(path));
-    for (const issue of atFields) form.setError(issue.path as Path<Values>, issue);
+    for (const issue of atFields)
+      form.setError(issue.path as Path<Values>, issue, { shouldFocus: issue === atFields[0] });
     const [other] = issues.filter((issue) => !atFields.includes(issue));
     if (other) setFailure(other.message);
     else if (atFields.length === 0) setFailure(retryable ? tradeFormText.unsent : message);

@@ -29,7 +29,7 @@ export function Screen(props: ScreenProps) {
   useEffect(() => {
     document.title = `${title} · ${uiText.product}`;
   }, [title]);
-  const heading = <Heading level={1}>{title}</Heading>;
+  const heading = <Heading level={1}>{unbroken(title)}</Heading>;
   const below = <Quiet>{subtitle}</Quiet>;
   return (
     <View role="main" id="content" tabIndex={-1} style={[styles.main, wide && styles.wide]}>
@@ -60,6 +60,18 @@ export function Screen(props: ScreenProps) {
     </View>
   );
 }
+
+/** A title whose dates and numbers of records stay on one line. */
+const unbroken = (title: string) =>
+  title.split(/(\S*-\d\S*)/).map((part, index) =>
+    index % 2 === 1 ? (
+      <span key={index} className="unbroken">
+        {part}
+      </span>
+    ) : (
+      part
+    ),
+  );
 
 /** A quiet line when it is a text, else whatever it is. */
 function Quiet({ small = false, children }: { small?: boolean; children: ReactNode }) {
