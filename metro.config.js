@@ -15,6 +15,7 @@ const unused = {
   '@tanstack/react-query/build/modern': ['HydrationBoundary', 'useMutationState', 'useQueries'],
   'expo-router/build': [
     'fork/native-stack/createNativeStackNavigator',
+    'head/ExpoHead',
     'layouts/Tabs',
     'layouts/_web-modal',
     'layouts/experimental-stack',

@@ -16,7 +16,9 @@ import { TradeCard } from './trade-card';
 import { TradeFilters } from './trade-filters';
 
 /** Loaded only where there is room for it: a phone shows cards. */
-const TradeTable = lazy(async () => ({ default: (await import('./trade-table')).TradeTable }));
+const TradeTable = lazy(async () => ({
+  default: (await import('@/components/tables/wide-tables')).TradeTable,
+}));
 
 const optionalColumns = [
   ['underlying', booksText.terms],
