@@ -18,7 +18,9 @@ import { isActive, useRunValuations, type ValueFilter } from '@/hooks/use-runs';
 import { ValueCard } from './value-card';
 
 /** Loaded only where there is room for it: a phone shows cards. */
-const ValueTable = lazy(async () => ({ default: (await import('./value-table')).ValueTable }));
+const ValueTable = lazy(async () => ({
+  default: (await import('@/components/tables/wide-tables')).ValueTable,
+}));
 
 export type ValuesSectionProps = {
   desk: DeskAccess;
