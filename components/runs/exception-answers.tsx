@@ -126,7 +126,13 @@ function Ways(props: AnswersProps) {
 
 const styles = StyleSheet.create({
   ways: { gap: space.sm },
-  acts: { flexDirection: 'row', flexWrap: 'wrap', columnGap: space.xl, rowGap: space.md },
+  acts: {
+    flexDirection: 'row',
+    flexWrap: 'wrap',
+    alignItems: 'baseline',
+    columnGap: space.xl,
+    rowGap: space.md,
+  },
   answer: {
     gap: 2,
     padding: space.md,

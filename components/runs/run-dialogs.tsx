@@ -20,6 +20,7 @@ export function CancelDialog({ desk, run, onClose }: RunDialogProps) {
       danger
       title={runText.cancelTitle(run.number)}
       act={runText.cancel}
+      otherwise={runText.keepRunning}
       busy={isPending}
       willHappen={{
         title: exceptionText.willHappen,

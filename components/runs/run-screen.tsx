@@ -168,10 +168,15 @@ function Acts({ desk, run, maySignOff, start }: ActsProps) {
   const buttons = (
     <>
       {mayRerun ? (
-        <Button grow kind="secondary" label={runText.rerun} onPress={() => start('rerun')} />
+        <Button
+          grow={!wide}
+          kind="secondary"
+          label={runText.rerun}
+          onPress={() => start('rerun')}
+        />
       ) : null}
       {maySignOff ? (
-        <Button grow label={signOffText.act} onPress={() => start('sign-off')} />
+        <Button grow={!wide} label={signOffText.act} onPress={() => start('sign-off')} />
       ) : null}
     </>
   );
@@ -197,7 +202,7 @@ function Standing({ run, desk, hindrances }: StandingProps) {
       <Notice
         tone="ochre"
         title={runText.cancelledBy(cancellation.by.name, at)}
-        body={runText.cancelledBody}
+        body={run.done > 0 ? runText.cancelledBody : undefined}
       />
     );
   }

@@ -100,7 +100,7 @@ function Values(props: ValuesSectionProps & { hidden: readonly string[] }) {
     return <SkeletonRows rows={8} height={56} />;
   if (rows.length === 0)
     return !filtered ? (
-      <Text tone="muted">{valuesText.empty}</Text>
+      <Text tone="muted">{isActive(run.status) ? valuesText.emptySoFar : valuesText.empty}</Text>
     ) : (
       <View style={styles.nothing}>
         <Text tone="muted">{valuesText.nothing}</Text>

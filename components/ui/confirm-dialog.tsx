@@ -10,6 +10,8 @@ import { Text } from './text';
 export type ConfirmDialogProps = {
   title: string;
   act: string;
+  /** What the other button says, where `Cancel` could be taken for the act. */
+  otherwise?: string;
   danger?: boolean;
   /** What exactly will happen, a sentence each, under its heading and before its last word. */
   willHappen: { title: string; sentences: readonly string[]; foot?: string };
@@ -45,7 +47,7 @@ export function ConfirmDialog(props: ConfirmDialogProps) {
         </View>
         {failure ? <Notice tone="brick" title={failure} /> : null}
         <View style={styles.actions}>
-          <Button kind="quiet" label={uiText.cancel} onPress={onClose} />
+          <Button kind="quiet" label={props.otherwise ?? uiText.cancel} onPress={onClose} />
           <Button submit kind={danger ? 'danger' : 'primary'} label={act} busy={busy} />
         </View>
       </form>

@@ -122,6 +122,7 @@ export const runText = {
       ? 'Nothing is valued yet, and nothing will be.'
       : `What has been valued so far stays in the history; the rest is not valued.`,
   cancelFoot: 'A cancelled run cannot be signed off; it can be run again.',
+  keepRunning: 'Let it run',
   cancelledBy: (name: string, at: string) => `Cancelled by ${name}, ${at}`,
   cancelledBody:
     'What was valued before stays in the history. Run it again to have every trade valued.',
@@ -262,7 +263,8 @@ export const valuesText = {
   firstValue: 'first value',
   since: (change: string) => `${change} since the close before`,
   openValue: (trade: string, value: string) => `${value}: value of ${trade} with its inputs`,
-  empty: 'Nothing is valued yet.',
+  empty: 'Nothing was valued.',
+  emptySoFar: 'Nothing is valued yet.',
   nothing: 'No value fits both of these filters.',
   clear: 'Clear the filters',
   showMore: 'Show more',
