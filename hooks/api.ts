@@ -10,6 +10,7 @@ import { ApiError, callEndpoint, type CallInput } from '@/shared/api-client';
 import { endpoints } from '@/shared/contracts';
 import type { Me, Session } from '@/shared/contracts/sessions';
 import type { Endpoint, ResponseOf } from '@/shared/endpoint';
+import { permissions, type Permission } from '@/shared/permissions';
 import { readStored, writeStored } from './local-store';
 
 /** What the tab asks of the person before waiting calls can go on. */
@@ -19,12 +20,14 @@ export type SessionState = {
   status: 'unknown' | 'signed-out' | 'signed-in';
   me: Me | null;
   prompt: Prompt | null;
+  /** What the person could do when an act was sent, and was refused because it was taken away. */
+  lost: readonly Permission[];
 };
 
 /** Scripts cannot see the refresh cookie; this remembers that there may be one to bring back. */
 const signedInKey = 'driftless.signed-in';
 
-let state: SessionState = { status: 'unknown', me: null, prompt: null };
+let state: SessionState = { status: 'unknown', me: null, prompt: null, lost: [] };
 let accessToken: string | undefined;
 let refreshing: Promise<void> | null = null;
 let waiting: {
@@ -74,7 +77,7 @@ export function forgetSession(): void {
   queryClient.clear();
   settlePrompt(false);
   writeStored(signedInKey, false);
-  setState({ status: 'signed-out', me: null });
+  setState({ status: 'signed-out', me: null, lost: [] });
 }
 
 const isSignedOut = (error: unknown): error is ApiError =>
@@ -157,7 +160,7 @@ export async function call<E extends Endpoint>(
   try {
     return await sendRenewing(endpoint, input);
   } catch (error) {
-    if (isCode(error, 'not-permitted', 'not-a-member', 'suspended')) await reloadMe();
+    if (isCode(error, 'not-permitted', 'not-a-member', 'suspended')) await followRefusal();
     if (!isCode(error, 'step-up-required') || !(await ask('confirm-password'))) throw error;
     return sendRenewing(endpoint, input);
   }
@@ -168,6 +171,19 @@ export async function reloadMe(): Promise<void> {
   const me = await sendRenewing(endpoints.getMe, {});
   setState({ me });
 }
+
+const held = (me: Me | null, permission: Permission) =>
+  me?.desks.filter((desk) => desk.permissions.includes(permission)).length ?? 0;
+
+/** What is no longer offered would otherwise go without a word. */
+async function followRefusal() {
+  const before = state.me;
+  await reloadMe();
+  const lost = permissions.filter((each) => held(state.me, each) < held(before, each));
+  if (lost.length > 0) setState({ lost });
+}
+
+export const dismissLost = (): void => setState({ lost: [] });
 
 /** On opening the page: is there a session that the cookie can bring back? */
 export async function restoreSession(): Promise<void> {

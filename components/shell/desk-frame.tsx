@@ -1,11 +1,17 @@
 import { usePathname } from 'expo-router';
 import { useEffect, type ReactNode } from 'react';
 import { StyleSheet, View } from 'react-native';
+import { Button } from '@/components/ui/button';
+import { Notice } from '@/components/ui/notice';
 import { ScreenCorner } from '@/components/ui/screen';
 import { useWide } from '@/components/ui/use-wide';
 import { shellText } from '@/constants/texts/shell';
+import { space } from '@/constants/theme';
+import { dismissLost } from '@/hooks/api';
 import { rememberDesk } from '@/hooks/use-desk';
+import { useSession } from '@/hooks/use-session';
 import type { DeskAccess, Me } from '@/shared/contracts/sessions';
+import { permissionSentence } from '@/shared/permissions';
 import { DeskSwitch } from './desk-switch';
 import { BottomBar, Rail, sectionOf } from './navigation';
 import { PlainPage } from './permitted';
@@ -31,6 +37,7 @@ export function DeskFrame({ me, desk, children }: DeskFrameProps) {
     <View style={wide ? styles.wide : styles.narrow}>
       {wide ? <Rail desk={desk} foot={deskSwitch} /> : null}
       <View style={styles.content}>
+        <LostPermissions />
         <ScreenCorner value={wide ? null : deskSwitch}>{content}</ScreenCorner>
       </View>
       {wide ? null : <BottomBar desk={desk} />}
@@ -38,8 +45,25 @@ export function DeskFrame({ me, desk, children }: DeskFrameProps) {
   );
 }
 
+/** Stays in sight until it is read: the part of the screen that was used has just gone. */
+function LostPermissions() {
+  const { lost } = useSession();
+  if (lost.length === 0) return null;
+  return (
+    <View style={styles.lost}>
+      <Notice
+        tone="brick"
+        title={shellText.lostTitle}
+        body={shellText.lost(lost.map(permissionSentence))}
+        action={<Button kind="secondary" label={shellText.lostRead} onPress={dismissLost} />}
+      />
+    </View>
+  );
+}
+
 const styles = StyleSheet.create({
   wide: { flexDirection: 'row', flexGrow: 1, alignItems: 'stretch' },
   narrow: { flexGrow: 1 },
+  lost: { position: 'sticky', top: 0, zIndex: 2, padding: space.sm },
   content: { flexGrow: 1, flexShrink: 1, flexBasis: 'auto', minWidth: 0 },
 });

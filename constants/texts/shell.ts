@@ -33,6 +33,10 @@ export const shellText = {
   notPermittedTitle: 'Not part of your role here',
   notPermitted: (act: string, role: string) =>
     `“${act}” is not among what a ${role.toLowerCase()} may do on this desk. The desk head can grant it.`,
+  lostTitle: 'What you may do on this desk was changed meanwhile',
+  lost: (sentences: readonly string[]) =>
+    `Refused, and no longer offered: ${sentences.join('; ')}. The desk head can say why.`,
+  lostRead: 'I have read it',
   notMemberTitle: 'Not your desk',
   notMember: 'You are not a member of this desk. Its head or the firm’s administrator can add you.',
   suspendedTitle: 'Your membership is suspended',
