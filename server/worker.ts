@@ -68,7 +68,11 @@ async function startLife(): Promise<Life> {
       concurrency,
       noHandleSignals: true,
       logger,
-      preset: { plugins: [presencePlugin(presence)] },
+      preset: {
+        plugins: [presencePlugin(presence)],
+        // Batches are written with patience; without them, a lost database ends the process.
+        worker: { completeJobBatchDelay: 0, failJobBatchDelay: 0 },
+      },
     });
     const onEnd = (error: unknown) => log.warn({ err: error }, 'the queue could not go on');
     const runnerEnded = runner.promise.catch(onEnd);
