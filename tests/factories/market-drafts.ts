@@ -45,7 +45,11 @@ export async function nextPolicyNumber(desk: Desk): Promise<number> {
   return (await PricingPolicy.count({ where: { deskId: desk.id } })) + 1;
 }
 
-export const makeDraftPolicy = async (desk: Desk, author: User) =>
+export const makeDraftPolicy = async (
+  desk: Desk,
+  author: User,
+  fields: Partial<Pick<PricingPolicy, 'sizes' | 'toleranceShare'>> = {},
+) =>
   PricingPolicy.create({
     deskId: desk.id,
     number: await nextPolicyNumber(desk),
@@ -59,4 +63,5 @@ export const makeDraftPolicy = async (desk: Desk, author: User) =>
     moneyTolerance: {},
     reason: 'First policy of the desk',
     authorId: author.id,
+    ...fields,
   });

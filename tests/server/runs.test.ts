@@ -18,7 +18,8 @@ import { runChunk } from '@/server/services/run-work';
 import { valuationBodySchema } from '@/shared/contracts/chain-bodies';
 import type { Run } from '@/shared/contracts/runs';
 import { makeApprovedClose, makeUnderlying } from '../factories/market';
-import { makeDesk, makeMember, type TestMember } from '../factories/people';
+import { makeDraftPolicy, nextPolicyNumber } from '../factories/market-drafts';
+import { makeDesk, makeMember, makeUser, type TestMember } from '../factories/people';
 import { makeFilledBook, makeLiveTrade, policyInForce, workOffRun } from '../factories/runs';
 import { makeBook } from '../factories/trades';
 
@@ -170,6 +171,28 @@ describe('a run of two books', () => {
     const one = await acts.list(analyst, { bookId: bookIds[0], limit: '1' });
     const two = await acts.list(analyst, { limit: '1', cursor: one.nextCursor ?? '' });
     expect(two.items[0].id).toBe(run.id);
+  });
+});
+
+describe('a policy that refines to a share of the tolerance', () => {
+  it('has each route as fine as that asks for, and on record as it was', async () => {
+    const elsewhere = await makeDesk();
+    const theirs = await makeUnderlying(elsewhere, { tolerance: 0.02 });
+    const member = await makeMember(elsewhere, 'analyst');
+    await makeDraftPolicy(elsewhere, await makeUser(), { sizes: null, toleranceShare: 0.25 });
+    await nextPolicyNumber(elsewhere);
+    const book = await makeFilledBook(elsewhere, theirs, 2, { exercise: 'american' });
+    const close = await makeApprovedClose(elsewhere, theirs, '2026-11-27');
+    const draft = { bookIds: [book.id], snapshotId: close.id };
+    const { body } = await runActs(elsewhere).start(member, draft);
+    await workOffRun(body.id);
+    const bodies = await bodiesOf(body.id);
+    expect(bodies).toHaveLength(4);
+    for (const { request, result } of bodies) {
+      if (!result.ok) throw new Error('these are priced');
+      expect(result.errorEstimate).toBeLessThanOrEqual(0.005);
+      expect(price(request)).toEqual(result);
+    }
   });
 });
 
