@@ -23,6 +23,7 @@ const inputs = [
   'package.json',
   'package-lock.json',
   'scripts/web-unused.js',
+  'scripts/without-descriptions.js',
   'scripts/zod-locales.js',
 ];
 

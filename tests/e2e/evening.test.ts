@@ -277,7 +277,9 @@ test('from a quote to a verified file, and a permission that ends', async () => 
     .first()
     .waitFor({ timeout: workTimeoutMs });
   await expectSound(auditor);
+  expect(visits.flatMap(({ complaints }) => complaints)).toEqual([]);
 
   await exportUntilWithdrawn(head);
-  expect(visits.flatMap(({ complaints }) => complaints)).toEqual([]);
+  const refused = [expect.stringContaining('403')];
+  expect(visits.flatMap(({ complaints }) => complaints)).toEqual(refused);
 });

@@ -26,9 +26,9 @@ async function expectSound(page: Page) {
 const act = (page: Page, name: string) => page.getByRole('button', { name, exact: true });
 const inDialog = (page: Page) => page.getByRole('dialog');
 
-/** Proposes on the first quote of the list; gives the page of the trade. */
+/** Proposes on the newest quote of winter wheat; gives the page of the trade. */
 async function propose(page: Page): Promise<string> {
-  await page.goto(`/desks/${deskOf(page)}/quotes`);
+  await page.goto(`/desks/${deskOf(page)}/quotes?search=WHEAT`);
   await page.getByRole('link', { name: /^Q-/ }).first().click();
   await page.getByRole('link', { name: 'Propose trade' }).click();
   await act(page, 'Propose trade').click();
