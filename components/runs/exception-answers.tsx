@@ -80,9 +80,9 @@ function noteRefusal({ run, userId, valuation }: AnswersProps): string | null {
 }
 
 function Ways(props: AnswersProps) {
-  const { desk, run, valuation, onRerun } = props;
+  const { desk, userId, run, valuation, onRerun } = props;
   const [open, setOpen] = useState<'study' | 'override' | null>(null);
-  const close = () => setOpen(null);
+  const answered = { desk, userId, run, valuation, onClose: () => setOpen(null) };
   const mayStudy = desk.permissions.includes('run-studies');
   const mayRun = desk.permissions.includes('start-runs');
   const refusal = mayRun ? noteRefusal(props) : null;
@@ -114,12 +114,8 @@ function Ways(props: AnswersProps) {
           {refusal}
         </Text>
       ) : null}
-      {open === 'override' ? (
-        <OverrideDialog desk={desk} run={run} valuation={valuation} onClose={close} />
-      ) : null}
-      {open === 'study' ? (
-        <StudyAnswerDialog desk={desk} run={run} valuation={valuation} onClose={close} />
-      ) : null}
+      {open === 'override' ? <OverrideDialog {...answered} /> : null}
+      {open === 'study' ? <StudyAnswerDialog {...answered} /> : null}
     </View>
   );
 }

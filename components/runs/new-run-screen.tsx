@@ -1,4 +1,3 @@
-import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { policyFacts } from '@/components/policies/policy-words';
 import { BackLink } from '@/components/ui/back-link';
@@ -14,21 +13,23 @@ import { Text } from '@/components/ui/text';
 import { LinkButton } from '@/components/ui/text-field';
 import { newRunText, runsText } from '@/constants/texts/runs';
 import { radius, color, space } from '@/constants/theme';
-import { ApiError } from '@/shared/api-client';
 import type { Book } from '@/shared/contracts/books';
 import type { SnapshotSummary } from '@/shared/contracts/market-data';
 import type { Policy } from '@/shared/contracts/policies';
 import type { DeskAccess } from '@/shared/contracts/sessions';
-import { newIdempotencyKey } from '@/hooks/api';
 import { errorOf } from '@/hooks/error-of';
 import { useBooks } from '@/hooks/use-books';
 import { useSnapshots } from '@/hooks/use-market-data';
 import { usePolicies } from '@/hooks/use-policies';
-import { useStartRun } from '@/hooks/use-runs';
+import { useRunChoice, useRunStart } from './use-new-run';
 
-export type NewRunScreenProps = { desk: DeskAccess; onStarted: (runId: string) => void };
+export type NewRunScreenProps = {
+  desk: DeskAccess;
+  userId: string;
+  onStarted: (runId: string) => void;
+};
 
-export function NewRunScreen({ desk, onStarted }: NewRunScreenProps) {
+export function NewRunScreen({ desk, userId, onStarted }: NewRunScreenProps) {
   const books = useBooks(desk.id);
   const closes = useSnapshots(desk.id, 'approved');
   const policies = usePolicies(desk.id);
@@ -43,6 +44,7 @@ export function NewRunScreen({ desk, onStarted }: NewRunScreenProps) {
       {books.data && closes.data && policies.data ? (
         <RunForm
           desk={desk}
+          userId={userId}
           books={books.data}
           closes={closes.data}
           onEarlier={closes.hasNextPage ? () => void closes.fetchNextPage() : undefined}
@@ -66,13 +68,13 @@ type RunFormProps = NewRunScreenProps & {
   policy: Policy | null;
 };
 
-function RunForm({ desk, books, closes, onEarlier, policy, onStarted }: RunFormProps) {
-  const [chosen, setChosen] = useState<readonly string[]>(() =>
-    books.length === 1 ? [books[0].id] : [],
-  );
-  const [closeId, setCloseId] = useState<string | null>(null);
-  const close = closes.find(({ id }) => id === closeId) ?? closes.at(0);
-  const start = useStart(desk.id, onStarted);
+function RunForm(props: RunFormProps) {
+  const { desk, books, closes, onEarlier, policy, onStarted } = props;
+  const { chosen, choose, close, chooseClose, forget } = useRunChoice(props);
+  const start = useRunStart(desk.id, (runId) => {
+    forget();
+    onStarted(runId);
+  });
   if (books.length === 0)
     return (
       <EmptyState
@@ -89,14 +91,14 @@ function RunForm({ desk, books, closes, onEarlier, policy, onStarted }: RunFormP
       <BooksSection
         books={books}
         chosen={chosen}
-        onChosen={setChosen}
+        onChosen={choose}
         error={start.issueAt('bookIds')}
       />
       <CloseSection
         desk={desk}
         closes={closes}
         close={close}
-        onClose={setCloseId}
+        onClose={chooseClose}
         onEarlier={onEarlier}
         error={start.issueAt('snapshotId')}
       />
@@ -118,34 +120,6 @@ function RunForm({ desk, books, closes, onEarlier, policy, onStarted }: RunFormP
       </Section>
     </>
   );
-}
-
-/** Sends the run once however often it is pressed, and sorts what the server says against it. */
-function useStart(deskId: string, onStarted: (runId: string) => void) {
-  const { mutate, error, isPending } = useStartRun(deskId);
-  const [idempotencyKey, setKey] = useState(newIdempotencyKey);
-  const issues = error instanceof ApiError ? error.issues : [];
-  const inForm = ['bookIds', 'snapshotId'];
-  const fieldOf = (path: string) => path.split('.')[0];
-  const other = issues.find(({ path }) => !inForm.includes(fieldOf(path)));
-  const unanswered = error instanceof ApiError && error.retryable;
-  const whole = issues.length === 0 && error !== null ? error.message : null;
-  return {
-    busy: isPending,
-    failure: other?.message ?? (unanswered ? newRunText.unsent : whole),
-    issueAt: (field: string) => issues.find(({ path }) => fieldOf(path) === field)?.message,
-    send: (body: { bookIds: string[]; snapshotId: string }) =>
-      mutate(
-        { idempotencyKey, body },
-        {
-          onSuccess: ({ id }) => onStarted(id),
-          // The server has answered: what is sent next is another request.
-          onError: (failure) => {
-            if (failure instanceof ApiError && !failure.retryable) setKey(newIdempotencyKey());
-          },
-        },
-      ),
-  };
 }
 
 type BooksSectionProps = {

@@ -6,12 +6,15 @@ import { overrideSchema, type ExceptionalValuation, type Run } from '@/shared/co
 import type { DeskAccess } from '@/shared/contracts/sessions';
 import { formatQuantity } from '@/shared/format/numbers';
 import { parseDecimal } from '@/shared/format/parse';
+import { storeKey } from '@/hooks/local-store';
+import { useKeptFields } from '@/hooks/use-kept-fields';
 import { useAnswerException, useReloadRun } from '@/hooks/use-runs';
 import { valueText } from './run-words';
 import { useRunConfirmation } from './use-run-confirmation';
 
 export type AnswerDialogProps = {
   desk: DeskAccess;
+  userId: string;
   run: Run;
   valuation: ExceptionalValuation;
   onClose: () => void;
@@ -50,8 +53,9 @@ function willSentence(valuation: ExceptionalValuation, typed: string): string {
 }
 
 /** A note by somebody who had no hand in it, with a value of its own or without. */
-export function OverrideDialog({ desk, run, valuation, onClose }: AnswerDialogProps) {
-  const [typed, setTyped] = useState<Typed>({ value: '', reason: '' });
+export function OverrideDialog({ desk, userId, run, valuation, onClose }: AnswerDialogProps) {
+  const keptAs = storeKey(`override.${valuation.exception.id}`, userId, desk.id);
+  const { values: typed, change, forget } = useKeptFields(keptAs, { value: '', reason: '' });
   const [complaints, setComplaints] = useState<Complaints>({});
   const answer = useAnswerException(desk.id, run.id, valuation.exception.id);
   const { confirm, ...told } = useRunConfirmation(useReloadRun(desk.id, run.id));
@@ -59,7 +63,14 @@ export function OverrideDialog({ desk, run, valuation, onClose }: AnswerDialogPr
   const submit = () => {
     const { note, complaints: found } = readNote(typed);
     setComplaints(found);
-    if (note) void confirm(() => answer.mutateAsync({ kind: 'override', body: note }), onClose);
+    if (note)
+      void confirm(
+        () => answer.mutateAsync({ kind: 'override', body: note }),
+        () => {
+          forget();
+          onClose();
+        },
+      );
   };
   return (
     <ConfirmDialog
@@ -89,7 +100,7 @@ export function OverrideDialog({ desk, run, valuation, onClose }: AnswerDialogPr
         selectAllOnFocus
         value={typed.value}
         error={complaints.value}
-        onChangeText={(value) => setTyped({ ...typed, value })}
+        onChangeText={(value) => change({ value })}
       />
       <TextAreaField
         label={exceptionText.reason}
@@ -98,7 +109,7 @@ export function OverrideDialog({ desk, run, valuation, onClose }: AnswerDialogPr
         error={complaints.reason}
         maxLength={500}
         required
-        onChangeText={(reason) => setTyped({ ...typed, reason })}
+        onChangeText={(reason) => change({ reason })}
       />
     </ConfirmDialog>
   );

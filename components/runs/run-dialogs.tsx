@@ -5,6 +5,8 @@ import { exceptionText, runText, signOffText } from '@/constants/texts/runs';
 import { runSignOffSchema, type Run } from '@/shared/contracts/runs';
 import type { DeskAccess } from '@/shared/contracts/sessions';
 import { newIdempotencyKey } from '@/hooks/api';
+import { storeKey } from '@/hooks/local-store';
+import { useKeptFields } from '@/hooks/use-kept-fields';
 import { useReloadRun, useRerun, useRunAct } from '@/hooks/use-runs';
 import { bookCodes } from './run-words';
 import { useRunConfirmation } from './use-run-confirmation';
@@ -73,16 +75,25 @@ export function RerunDialog({ desk, run, onClose, onStarted }: RerunDialogProps)
   );
 }
 
-export function SignOffDialog({ desk, run, onClose }: RunDialogProps) {
-  const [comment, setComment] = useState('');
+type SignOffDialogProps = RunDialogProps & { userId: string };
+
+export function SignOffDialog({ desk, userId, run, onClose }: SignOffDialogProps) {
+  const keptAs = storeKey(`sign-off.${run.id}`, userId, desk.id);
+  const { values: typed, change, forget } = useKeptFields(keptAs, { comment: '' });
   const [complaint, setComplaint] = useState<string>();
   const { mutateAsync, isPending } = useRunAct(desk.id, run.id);
   const { confirm, ...told } = useRunConfirmation(useReloadRun(desk.id, run.id));
   const submit = () => {
-    const read = runSignOffSchema.safeParse({ version: run.version, comment });
+    const read = runSignOffSchema.safeParse({ version: run.version, ...typed });
     setComplaint(read.error?.issues.at(0)?.message);
     if (read.success)
-      void confirm(() => mutateAsync({ kind: 'sign-off', body: read.data }), onClose);
+      void confirm(
+        () => mutateAsync({ kind: 'sign-off', body: read.data }),
+        () => {
+          forget();
+          onClose();
+        },
+      );
   };
   const values = signOffText.values(run.total);
   return (
@@ -108,11 +119,11 @@ export function SignOffDialog({ desk, run, onClose }: RunDialogProps) {
       <TextAreaField
         label={signOffText.comment}
         hint={signOffText.commentHint}
-        value={comment}
+        value={typed.comment}
         error={complaint}
         maxLength={500}
         required
-        onChangeText={setComment}
+        onChangeText={(comment) => change({ comment })}
       />
     </ConfirmDialog>
   );

@@ -111,7 +111,9 @@ function RunPage(props: RunPageProps) {
       {open === 'rerun' ? (
         <RerunDialog desk={desk} run={run} onClose={close} onStarted={props.onRerun} />
       ) : null}
-      {open === 'sign-off' ? <SignOffDialog desk={desk} run={run} onClose={close} /> : null}
+      {open === 'sign-off' ? (
+        <SignOffDialog desk={desk} userId={userId} run={run} onClose={close} />
+      ) : null}
     </Screen>
   );
 }

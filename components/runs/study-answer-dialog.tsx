@@ -11,6 +11,8 @@ import { studiesText } from '@/constants/texts/studies';
 import { studyAnswerSchema } from '@/shared/contracts/runs';
 import type { StudySummary } from '@/shared/contracts/studies';
 import { errorOf } from '@/hooks/error-of';
+import { storeKey } from '@/hooks/local-store';
+import { useKeptFields } from '@/hooks/use-kept-fields';
 import { useAnswerException, useReloadRun } from '@/hooks/use-runs';
 import { useStudiesOfTerms } from '@/hooks/use-studies';
 import type { AnswerDialogProps } from './override-dialog';
@@ -61,20 +63,27 @@ const optionsOf = (studies: readonly StudySummary[]) => [
 type Complaints = { study?: string; reason?: string };
 
 function AnswerForm(props: AnswerDialogProps & { studies: readonly StudySummary[] }) {
-  const { desk, run, valuation, studies, onClose } = props;
+  const { desk, userId, run, valuation, studies, onClose } = props;
   const [studyId, setStudyId] = useState(studies.length === 1 ? studies[0].id : '');
-  const [reason, setReason] = useState('');
+  const keptAs = storeKey(`study-answer.${valuation.exception.id}`, userId, desk.id);
+  const { values, change, forget } = useKeptFields(keptAs, { reason: '' });
   const [complaints, setComplaints] = useState<Complaints>({});
   const answer = useAnswerException(desk.id, run.id, valuation.exception.id);
   const { confirm, ...told } = useRunConfirmation(useReloadRun(desk.id, run.id));
   const submit = () => {
-    const read = studyAnswerSchema.safeParse({ studyId, reason });
+    const read = studyAnswerSchema.safeParse({ studyId, ...values });
     setComplaints({
       study: studyId === '' ? exceptionText.noStudy : undefined,
       reason: read.error?.issues.find(({ path }) => path[0] === 'reason')?.message,
     });
     if (read.success)
-      void confirm(() => answer.mutateAsync({ kind: 'study', body: read.data }), onClose);
+      void confirm(
+        () => answer.mutateAsync({ kind: 'study', body: read.data }),
+        () => {
+          forget();
+          onClose();
+        },
+      );
   };
   return (
     <ConfirmDialog
@@ -103,11 +112,11 @@ function AnswerForm(props: AnswerDialogProps & { studies: readonly StudySummary[
       <TextAreaField
         label={exceptionText.finding}
         hint={exceptionText.findingHint}
-        value={reason}
+        value={values.reason}
         error={complaints.reason}
         maxLength={500}
         required
-        onChangeText={setReason}
+        onChangeText={(reason) => change({ reason })}
       />
     </ConfirmDialog>
   );

@@ -19,6 +19,8 @@ import type { DeskAccess } from '@/shared/contracts/sessions';
 import { optionTerms } from '@/shared/format/terms';
 import { ApiError } from '@/shared/api-client';
 import { errorOf } from '@/hooks/error-of';
+import { storeKey } from '@/hooks/local-store';
+import { useKeptFields } from '@/hooks/use-kept-fields';
 import { useQuote } from '@/hooks/use-quotes';
 import { useStartStudy } from '@/hooks/use-studies';
 import { useTrade } from '@/hooks/use-trades';
@@ -50,16 +52,18 @@ export function NewStudyScreen({ desk, userId, of, onStarted }: NewStudyScreenPr
         <OfFreeTerms desk={desk} userId={userId} onStarted={onStarted} />
       ) : null}
       {of.kind === 'quote' ? (
-        <OfQuote desk={desk} quoteId={of.quoteId} onStarted={onStarted} />
+        <OfQuote desk={desk} userId={userId} quoteId={of.quoteId} onStarted={onStarted} />
       ) : null}
-      {of.kind === 'trade' ? <OfTrade desk={desk} source={of} onStarted={onStarted} /> : null}
+      {of.kind === 'trade' ? (
+        <OfTrade desk={desk} userId={userId} source={of} onStarted={onStarted} />
+      ) : null}
     </Screen>
   );
 }
 
-type Start = Pick<NewStudyScreenProps, 'desk' | 'onStarted'>;
+type Start = Pick<NewStudyScreenProps, 'desk' | 'userId' | 'onStarted'>;
 
-function OfQuote({ desk, quoteId, onStarted }: Start & { quoteId: string }) {
+function OfQuote({ desk, userId, quoteId, onStarted }: Start & { quoteId: string }) {
   const { data: quote, error, refetch } = useQuote(desk.id, quoteId);
   if (error) return <ErrorState {...errorOf(error)} onRetry={() => void refetch()} />;
   if (!quote) return <SkeletonRows rows={4} height={60} />;
@@ -73,6 +77,7 @@ function OfQuote({ desk, quoteId, onStarted }: Start & { quoteId: string }) {
       </Section>
       <Ladders
         desk={desk}
+        keptAs={storeKey(`new-study.${quoteId}`, userId, desk.id)}
         source={{ kind: 'quote', quoteId }}
         exercise={quote.exercise}
         onStarted={onStarted}
@@ -83,7 +88,7 @@ function OfQuote({ desk, quoteId, onStarted }: Start & { quoteId: string }) {
 
 type TradeSource = Extract<Source, { kind: 'trade' }>;
 
-function OfTrade({ desk, source, onStarted }: Start & { source: TradeSource }) {
+function OfTrade({ desk, userId, source, onStarted }: Start & { source: TradeSource }) {
   const { data: trade, error, refetch } = useTrade(desk.id, source.tradeId);
   if (error) return <ErrorState {...errorOf(error)} onRetry={() => void refetch()} />;
   if (!trade) return <SkeletonRows rows={4} height={60} />;
@@ -98,14 +103,20 @@ function OfTrade({ desk, source, onStarted }: Start & { source: TradeSource }) {
           {newStudyText.tradeNote}
         </Text>
       </Section>
-      <Ladders desk={desk} source={source} exercise={trade.exercise} onStarted={onStarted} />
+      <Ladders
+        desk={desk}
+        keptAs={storeKey(`new-study.${source.tradeId}`, userId, desk.id)}
+        source={source}
+        exercise={trade.exercise}
+        onStarted={onStarted}
+      />
     </>
   );
 }
 
 const nothingTaken = () => undefined;
 
-function OfFreeTerms({ desk, userId, onStarted }: Start & { userId: string }) {
+function OfFreeTerms({ desk, userId, onStarted }: Start) {
   const ticket = useTicket(userId, desk, null, nothingTaken);
   const { underlying, underlyings, reading } = ticket;
   if (underlyings.isError)
@@ -123,6 +134,7 @@ function OfFreeTerms({ desk, userId, onStarted }: Start & { userId: string }) {
       </Section>
       <Ladders
         desk={desk}
+        keptAs={storeKey('new-study', userId, desk.id)}
         source={reading.priced ? freeSource(reading.priced.terms) : null}
         exercise={ticket.draft.exercise}
         onStarted={onStarted}
@@ -143,7 +155,7 @@ function freeSource(terms: PricedTerms): Source {
 }
 
 const refinable = methodNames.filter((name) => name !== 'closed-form');
-const first: readonly MethodName[] = ['heat-crank-nicolson'];
+const first: MethodName = 'heat-crank-nicolson';
 const rowChoices = Array.from({ length: studyRows.max - studyRows.min + 1 }, (_, i) =>
   String(studyRows.min + i),
 );
@@ -151,21 +163,43 @@ const rowChoices = Array.from({ length: studyRows.max - studyRows.min + 1 }, (_,
 /** American walks and grids take longer: one row fewer is as telling. */
 const usualRows: Record<PricedExercise, string> = { european: '6', american: '5' };
 
-type LaddersProps = Start & { source: Source | null; exercise: PricedExercise };
+type LaddersProps = Omit<Start, 'userId'> & {
+  /** Where the chosen routes and rows are kept in this browser. */
+  keptAs: string;
+  source: Source | null;
+  exercise: PricedExercise;
+};
 
-function Ladders({ desk, source, exercise, onStarted }: LaddersProps) {
-  const [chosen, setChosen] = useState(first);
-  const [rows, setRows] = useState<string | null>(null);
+/** The chosen routes and rows, until the study is started. */
+function useChoice(keptAs: string, exercise: PricedExercise) {
+  const { values, change, forget } = useKeptFields<{ routes: string; rows: string }>(keptAs, {
+    routes: first,
+    rows: '',
+  });
+  const names = values.routes.split(' ');
+  const chosen = refinable.filter((name) => names.includes(name));
+  const toggle = (name: MethodName) => {
+    const next = refinable.filter((one) => chosen.includes(one) !== (one === name));
+    change({ routes: next.join(' ') });
+  };
+  const length = rowChoices.includes(values.rows) ? values.rows : usualRows[exercise];
+  return { chosen, toggle, length, setLength: (rows: string) => change({ rows }), forget };
+}
+
+function Ladders({ desk, keptAs, source, exercise, onStarted }: LaddersProps) {
+  const { chosen, toggle, length, setLength, forget } = useChoice(keptAs, exercise);
   const [idempotencyKey, setKey] = useState(() => crypto.randomUUID());
   const start = useStartStudy(desk.id);
-  const length = rows ?? usualRows[exercise];
   const submit = () => {
     if (source === null || chosen.length === 0) return;
     const ladders = chosen.map((name) => ({ name, rows: Number(length) }));
     start.mutate(
       { idempotencyKey, body: { source, ladders } },
       {
-        onSuccess: ({ id }) => onStarted(id),
+        onSuccess: ({ id }) => {
+          forget();
+          onStarted(id);
+        },
         // The server has answered: what is sent next is another request.
         onError: (error) => {
           if (error instanceof ApiError && !error.retryable) setKey(crypto.randomUUID());
@@ -173,12 +207,6 @@ function Ladders({ desk, source, exercise, onStarted }: LaddersProps) {
       },
     );
   };
-  const toggle = (name: MethodName) =>
-    setChosen(
-      refinable.filter((other) =>
-        other === name ? !chosen.includes(name) : chosen.includes(other),
-      ),
-    );
   return (
     <Section title={newStudyText.methodsTitle}>
       <View role="group" aria-label={newStudyText.methodsTitle} style={styles.methods}>
@@ -203,7 +231,7 @@ function Ladders({ desk, source, exercise, onStarted }: LaddersProps) {
           hint={newStudyText.rowsHint}
           value={length}
           options={rowChoices.map((value) => ({ value, label: value }))}
-          onChange={setRows}
+          onChange={setLength}
         />
       </View>
       {chosen.length === 0 ? <Text tone="brick">{newStudyText.chooseMethod}</Text> : null}

@@ -11,8 +11,8 @@ import type { DeskAccess } from '@/shared/contracts/sessions';
 import { studyDecisionSchema, type Study } from '@/shared/contracts/studies';
 import { formatInstant } from '@/shared/format/dates';
 import { errorOf } from '@/hooks/error-of';
-import { forgetForm, keepForm, readKeptForm } from '@/hooks/kept-form';
 import { storeKey } from '@/hooks/local-store';
+import { useKeptFields } from '@/hooks/use-kept-fields';
 import { useStudyAct } from '@/hooks/use-studies';
 
 export type StudyDecisionProps = { desk: DeskAccess; study: Study; userId: string };
@@ -43,25 +43,15 @@ export function StudyDecision({ desk, study, userId }: StudyDecisionProps) {
   );
 }
 
-/** A comment that outlives a reload, until the decision is on record. */
-function useKeptComment(keptAs: string) {
-  const [comment, setComment] = useState(() => readKeptForm(keptAs, { comment: '' }).comment);
-  const change = (text: string) => {
-    setComment(text);
-    keepForm(keptAs, { comment: text });
-  };
-  return [comment, change] as const;
-}
-
 function DecisionForm({ desk, study, userId }: StudyDecisionProps) {
   const keptAs = storeKey(`study.${study.id}`, userId, desk.id);
-  const [comment, setComment] = useKeptComment(keptAs);
+  const { values, change, forget } = useKeptFields(keptAs, { comment: '' });
   const [error, setError] = useState<string>();
   const act = useStudyAct(desk.id, study.id);
   const decide = (kind: 'sign-off' | 'send-back') => {
-    const read = studyDecisionSchema.safeParse({ version: study.version, comment });
+    const read = studyDecisionSchema.safeParse({ version: study.version, ...values });
     setError(read.error?.issues.at(0)?.message);
-    if (read.success) act.mutate({ kind, ...read.data }, { onSuccess: () => forgetForm(keptAs) });
+    if (read.success) act.mutate({ kind, ...read.data }, { onSuccess: forget });
   };
   const under = act.isPending ? act.variables?.kind : null;
   return (
@@ -69,11 +59,11 @@ function DecisionForm({ desk, study, userId }: StudyDecisionProps) {
       <TextAreaField
         label={studiesText.comment}
         hint={studiesText.commentHint}
-        value={comment}
+        value={values.comment}
         error={error}
         maxLength={500}
         required
-        onChangeText={setComment}
+        onChangeText={(comment) => change({ comment })}
       />
       <Text size="small" tone="muted">
         {studiesText.decisionNote}

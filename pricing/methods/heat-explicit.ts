@@ -95,9 +95,9 @@ function amplificationOf(lambda: number, spaceSteps: number): number {
 }
 
 function whyUnstable(lambda: number): string {
-  const stay = (1 - 2 * lambda).toFixed(2);
+  const stay = (2 * lambda - 1).toFixed(2);
   const factor = (4 * lambda - 1).toFixed(2);
-  return `At k/h² = ${lambda.toFixed(2)}, past ½, the walk would stay with a probability of ${stay}, and each step multiplies the shortest wave by −${factor}.`;
+  return `At k/h² = ${lambda.toFixed(2)}, past ½, the walk would stay with a probability of −${stay}, and each step multiplies the shortest wave by −${factor}.`;
 }
 
 function pastTheLimit(

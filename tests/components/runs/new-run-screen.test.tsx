@@ -6,7 +6,16 @@ import { NewRunScreen } from '@/components/runs/new-run-screen';
 import type { SnapshotSummary } from '@/shared/contracts/market-data';
 import type { Policy } from '@/shared/contracts/policies';
 import { playWindow } from '../browser';
-import { ada, ben, book, deskOf, playServer, problem, type Sent } from '../trades/play-trades';
+import {
+  ada,
+  ben,
+  book,
+  cleo,
+  deskOf,
+  playServer,
+  problem,
+  type Sent,
+} from '../trades/play-trades';
 import { finishedRun, page, runId } from './play-runs';
 
 jest.setTimeout(60_000);
@@ -65,19 +74,22 @@ function open(
     answer,
   );
   const onStarted = jest.fn();
-  render(
+  const { unmount } = render(
     <QueryClientProvider client={new QueryClient()}>
-      <NewRunScreen desk={deskOf('risk-officer')} onStarted={onStarted} />
+      <NewRunScreen desk={deskOf('risk-officer')} userId={cleo.id} onStarted={onStarted} />
     </QueryClientProvider>,
   );
-  return { sent, onStarted };
+  return { sent, onStarted, unmount };
 }
 
 const startButton = () => screen.findByRole('button', { name: 'Start the run' });
 const tick = async (code: string) =>
   userEvent.click(await screen.findByRole('checkbox', { name: new RegExp(code) }));
 
-beforeEach(() => playWindow({ wide: true }));
+beforeEach(() => {
+  playWindow({ wide: true });
+  localStorage.clear();
+});
 
 it('says how many trades are valued, on which close and by which policy, and starts once', async () => {
   const { sent, onStarted } = open({}, () => ({ status: 201, body: finishedRun }));
@@ -96,6 +108,22 @@ it('says how many trades are valued, on which close and by which policy, and sta
   expect(sent).toMatchObject([
     { path: 'runs', body: { bookIds: [book.id, freight.id], snapshotId: closes[1].id } },
   ]);
+});
+
+it('keeps what is chosen over a reload, but no close that a newer one has followed', async () => {
+  const { unmount } = open();
+  await tick('FREIGHT');
+  await userEvent.selectOptions(screen.getByRole('combobox'), '2026-11-27');
+  unmount();
+  const again = open();
+  expect(
+    await screen.findByText(/^5 live trades of 1 book .* on the close of 2026-11-27/),
+  ).toBeTruthy();
+  again.unmount();
+  open({ '/market-data': page([closeOf(3, '2026-12-01'), ...closes]) });
+  expect(
+    await screen.findByText(/^5 live trades of 1 book .* on the close of 2026-12-01/),
+  ).toBeTruthy();
 });
 
 it('does not start what has nothing to value', async () => {

@@ -56,7 +56,7 @@ type Opening = { role?: 'analyst' | 'risk-officer' | 'auditor'; userId?: string;
 function open({ role = 'risk-officer', userId = cleo.id, view = {} }: Opening = {}) {
   const onView = jest.fn();
   const onRerun = jest.fn();
-  render(
+  const { unmount } = render(
     <QueryClientProvider client={new QueryClient()}>
       <RunScreen
         desk={deskOf(role)}
@@ -68,12 +68,13 @@ function open({ role = 'risk-officer', userId = cleo.id, view = {} }: Opening = 
       />
     </QueryClientProvider>,
   );
-  return { onView, onRerun };
+  return { onView, onRerun, unmount };
 }
 
 beforeEach(() => {
   playWindow({ wide: true });
   playDialogs();
+  localStorage.clear();
 });
 
 const cardOf = async (trade: string) => {
@@ -225,6 +226,22 @@ describe('an answer', () => {
     expect(sent[0].path).toMatch(/exceptions\/a+-.*\/override$/);
   });
 
+  it('by a note is kept over a reload until it is on record', async () => {
+    serve();
+    const { unmount } = open();
+    const noteOf = async (trade: string) => {
+      const card = await cardOf(trade);
+      await userEvent.click(card.getByRole('button', { name: 'Write a note' }));
+      const dialog = within(screen.getByRole('dialog', { name: `Note on ${trade}` }));
+      return dialog.getByRole('textbox', { name: 'Reason' });
+    };
+    await userEvent.type(await noteOf('T-0001'), 'Two dealers');
+    unmount();
+    open();
+    expect(await noteOf('T-0001')).toHaveProperty('value', 'Two dealers');
+    expect(await noteOf('T-0002')).toHaveProperty('value', '');
+  });
+
   it('by a note is refused to whoever had a hand in it, with why', async () => {
     serve();
     open({ role: 'analyst', userId: ben.id });
@@ -305,12 +322,12 @@ describe('the sign-off', () => {
     expect(sent).toMatchObject([{ body: { version: 12, comment } }]);
   });
 
-  it('names what somebody quicker has done, and keeps the comment', async () => {
+  it('names what somebody quicker has done, and keeps the comment, also over a reload', async () => {
     const message = 'Someone was first: run R-0007 was signed off.';
     serve({ run: clean }, () =>
       problem(409, 'wrong-state', [{ path: '', code: 'wrong-state', message }]),
     );
-    open();
+    const { unmount } = open();
     await userEvent.click(await screen.findByRole('button', { name: 'Sign off' }));
     const dialog = within(screen.getByRole('dialog', { name: 'Sign off run R-0007' }));
     const field = dialog.getByRole('textbox', { name: 'Comment' });
@@ -318,5 +335,12 @@ describe('the sign-off', () => {
     await userEvent.click(dialog.getByRole('button', { name: 'Sign off' }));
     expect(await dialog.findByText(message)).toBeTruthy();
     expect(field).toHaveProperty('value', 'All were looked into.');
+    unmount();
+    open();
+    await userEvent.click(await screen.findByRole('button', { name: 'Sign off' }));
+    expect(screen.getByRole('textbox', { name: 'Comment' })).toHaveProperty(
+      'value',
+      'All were looked into.',
+    );
   });
 });

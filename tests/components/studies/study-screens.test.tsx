@@ -158,7 +158,7 @@ describe('a finished study', () => {
     playServer(studyWith([routeWith('heat-explicit', 3)]));
     open();
     expect(await screen.findByText('Past the stability limit')).toBeTruthy();
-    expect(screen.getByText(/past ½, the walk would stay with a probability of -0/)).toBeTruthy();
+    expect(screen.getByText(/past ½, the walk would stay with a probability of −0/)).toBeTruthy();
     expect(screen.getByText(/^unstable, ×\d\.\d\d a step$/)).toBeTruthy();
   });
 
