@@ -1,5 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod';
-import type { ReactNode } from 'react';
+import { useEffect, type ReactNode } from 'react';
 import {
   FormProvider,
   useForm,
@@ -11,6 +11,8 @@ import {
 import { z } from 'zod';
 import { ConfirmDialog } from '@/components/ui/confirm-dialog';
 import { tradeActText } from '@/constants/texts/trades';
+import { forgetForm, keepForm, readKeptForm } from '@/hooks/kept-form';
+import { storeKey } from '@/hooks/local-store';
 import type { TradeAct } from '@/hooks/use-trades';
 import { endpoints } from '@/shared/contracts';
 import { tradeClosingSchema, tradeExpirySchema } from '@/shared/contracts/trade-acts';
@@ -28,6 +30,7 @@ export type TradeActDialogProps = {
   kind: TradeAct['kind'];
   trade: Trade;
   desk: DeskAccess;
+  userId: string;
   onClose: () => void;
   onDone: () => void;
 };
@@ -50,6 +53,8 @@ export function TradeActDialog({ kind, ...rest }: TradeActDialogProps) {
 
 type ActFormProps<Values extends FieldValues, Read> = DialogProps & {
   kind: TradeAct['kind'];
+  /** Where what is typed outlives a reload, until the act is on record. */
+  keptAs?: string;
   form: UseFormReturn<Values, unknown, Read>;
   actOf: (values: Read) => TradeAct;
   sentences: readonly string[];
@@ -57,9 +62,21 @@ type ActFormProps<Values extends FieldValues, Read> = DialogProps & {
   children?: ReactNode;
 };
 
+const keptAsOf = (act: string, { trade, userId, desk }: DialogProps) =>
+  storeKey(`trade-${act}.${trade.id}`, userId, desk.id);
+
 function ActForm<Values extends FieldValues, Read>(props: ActFormProps<Values, Read>) {
-  const { kind, form, trade, desk, actOf, sentences, onClose, onDone } = props;
-  const { confirm, ...confirmation } = useTradeConfirmation(desk.id, trade, onDone);
+  const { kind, keptAs, form, trade, desk, actOf, sentences, onClose, onDone } = props;
+  const { confirm, ...confirmation } = useTradeConfirmation(desk.id, trade, () => {
+    if (keptAs) forgetForm(keptAs);
+    onDone();
+  });
+  const { subscribe } = form;
+  useEffect(() => {
+    if (!keptAs) return;
+    const callback = ({ values }: { values: Values }) => keepForm(keptAs, values);
+    return subscribe({ formState: { values: true }, callback });
+  }, [subscribe, keptAs]);
   const fields = Object.keys(form.getValues());
   const submit = form.handleSubmit((values) =>
     confirm(actOf(values), (path, message) => {
@@ -118,13 +135,18 @@ const ReasonArea = () => (
 
 function ReturnDialog(props: DialogProps) {
   const { trade } = props;
-  const form = useForm({ resolver: zodResolver(returnForm), defaultValues: { reason: '' } });
+  const keptAs = keptAsOf('return', props);
+  const form = useForm({
+    resolver: zodResolver(returnForm),
+    defaultValues: readKeptForm(keptAs, { reason: '' }),
+  });
   const will =
     trade.status === 'amended' ? tradeActText.willReturnAmendment : tradeActText.willReturn;
   return (
     <ActForm
       {...props}
       kind="return"
+      keptAs={keptAs}
       form={form}
       actOf={(values) => ({ kind: 'return', body: { ...values, version: trade.version } })}
       sentences={[will(trade.number, trade.versions[0].proposedBy.name)]}
@@ -149,14 +171,15 @@ function amountWords(amount: string, currency: string): string {
 
 function CloseDialog(props: DialogProps) {
   const { trade, desk } = props;
+  const keptAs = keptAsOf('close', props);
   const form = useForm({
     resolver: zodResolver(closeForm),
-    defaultValues: {
+    defaultValues: readKeptForm(keptAs, {
       date: todayAt(desk),
       amount: '',
       currency: trade.underlying.currency,
       reason: '',
-    },
+    }),
   });
   const [date, amount, currency] = useWatch({
     control: form.control,
@@ -168,6 +191,7 @@ function CloseDialog(props: DialogProps) {
       {...props}
       danger
       kind="close"
+      keptAs={keptAs}
       form={form}
       actOf={(values) => ({ kind: 'close', body: { ...values, version: trade.version } })}
       sentences={[tradeActText.willClose(trade.number, money, date)]}

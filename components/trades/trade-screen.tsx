@@ -118,6 +118,7 @@ function TradePage({ desk, userId, trade }: TradePageProps) {
           kind={open}
           trade={trade}
           desk={desk}
+          userId={userId}
           onClose={() => setOpen(null)}
           onDone={() => {
             setDone(tradeActText.done[open](trade.number));
