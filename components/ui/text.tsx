@@ -1,9 +1,26 @@
-import type { ReactNode } from 'react';
+import { Children, type ReactNode } from 'react';
 import { StyleSheet, Text as NativeText, type TextProps as NativeTextProps } from 'react-native';
 import { color, font, fontSize, lineHeight, type FontSize } from '@/constants/theme';
 
 export const tones = ['ink', 'muted', 'lake', 'moss', 'ochre', 'brick'] as const;
 export type Tone = (typeof tones)[number];
+
+/** A day, with its time of day: lines break at its hyphens and its space no more. */
+const dayPattern = /(\d{4}-\d{2}-\d{2}(?: \d{2}:\d{2})?)/;
+
+function wholeDays(children: ReactNode): ReactNode {
+  if (Array.isArray(children)) return Children.map(children, wholeDays);
+  if (typeof children !== 'string' || !dayPattern.test(children)) return children;
+  return children.split(dayPattern).map((part, index) =>
+    index % 2 === 1 ? (
+      <span key={index} className="unbroken">
+        {part}
+      </span>
+    ) : (
+      part
+    ),
+  );
+}
 
 export type TextProps = Omit<NativeTextProps, 'role'> & {
   size?: FontSize;
@@ -26,6 +43,7 @@ export function Text({
   tabular = false,
   mono = false,
   style,
+  children,
   ...rest
 }: TextProps) {
   return (
@@ -43,7 +61,9 @@ export function Text({
         style,
       ]}
       {...rest}
-    />
+    >
+      {wholeDays(children)}
+    </NativeText>
   );
 }
 

@@ -8,6 +8,7 @@ import { queryClient, restoreSession } from '@/hooks/api';
 import type { Member } from '@/shared/contracts/people';
 import { effectivePermissions, type DeskRole } from '@/shared/permissions';
 import { playDialogs, playWindow } from './browser';
+import { saying } from './saying';
 
 // Looking things up by role is slow in jsdom, and the machine may be busy.
 jest.setTimeout(60_000);
@@ -133,7 +134,7 @@ test('a grant shows what will happen, then sends it with version and key', async
   await open('desk-head');
   await fillGrant();
   await fill('Last day', '2999-03-31');
-  expect(dialog().getByText(/Ada may do this until 2999-03-31/)).toBeTruthy();
+  expect(dialog().getByText(saying(/Ada may do this until 2999-03-31/))).toBeTruthy();
   await userEvent.click(dialog().getByRole('button', { name: 'Grant a permission' }));
   expect(await screen.findByText('Ada has the permission.')).toBeTruthy();
   expect(sent).toEqual([

@@ -6,6 +6,7 @@ import { NewRunScreen } from '@/components/runs/new-run-screen';
 import type { SnapshotSummary } from '@/shared/contracts/market-data';
 import type { Policy } from '@/shared/contracts/policies';
 import { playWindow } from '../browser';
+import { saying } from '../saying';
 import {
   ada,
   ben,
@@ -99,10 +100,10 @@ it('says how many trades are valued, on which close and by which policy, and sta
   await tick('GRAIN');
   await tick('FREIGHT');
   expect(
-    screen.getByText(/^6 live trades of 2 books are valued on the close of 2026-11-30/),
+    screen.getByText(saying(/^6 live trades of 2 books are valued on the close of 2026-11-30/)),
   ).toBeTruthy();
   await userEvent.selectOptions(screen.getByRole('combobox'), '2026-11-27');
-  expect(screen.getByText(/on the close of 2026-11-27/)).toBeTruthy();
+  expect(screen.getByText(saying(/on the close of 2026-11-27/))).toBeTruthy();
   await userEvent.click(button);
   await waitFor(() => expect(onStarted).toHaveBeenCalledWith(runId));
   expect(sent).toMatchObject([
@@ -117,12 +118,12 @@ it('keeps what is chosen over a reload, but no close that a newer one has follow
   unmount();
   const again = open();
   expect(
-    await screen.findByText(/^5 live trades of 1 book .* on the close of 2026-11-27/),
+    await screen.findByText(saying(/^5 live trades of 1 book .* on the close of 2026-11-27/)),
   ).toBeTruthy();
   again.unmount();
   open({ '/market-data': page([closeOf(3, '2026-12-01'), ...closes]) });
   expect(
-    await screen.findByText(/^5 live trades of 1 book .* on the close of 2026-12-01/),
+    await screen.findByText(saying(/^5 live trades of 1 book .* on the close of 2026-12-01/)),
   ).toBeTruthy();
 });
 

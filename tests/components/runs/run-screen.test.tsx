@@ -5,6 +5,7 @@ import userEvent from '@testing-library/user-event';
 import { RunScreen, type RunView } from '@/components/runs/run-screen';
 import type { ExceptionalValuation, Run } from '@/shared/contracts/runs';
 import { playDialogs, playWindow } from '../browser';
+import { saying } from '../saying';
 import { ada, ben, cleo, deskOf, playServer, problem } from '../trades/play-trades';
 import {
   agreeing,
@@ -97,7 +98,7 @@ describe('a finished run', () => {
       }),
     ).toBeTruthy();
     expect(screen.getByText('close of 2026-11-30').getAttribute('href')).toMatch(/market-data\/4+/);
-    expect(screen.getByText(/started by Ada, 2026-12-01 08:00/)).toBeTruthy();
+    expect(screen.getByText(saying(/started by Ada, 2026-12-01 08:00/))).toBeTruthy();
     expect(screen.getByText(/1 left out/)).toBeTruthy();
   });
 
@@ -318,7 +319,7 @@ describe('the sign-off', () => {
     expect(dialog.getByText(/at least 8 characters/)).toBeTruthy();
     await userEvent.type(dialog.getByRole('textbox', { name: 'Comment' }), comment);
     await userEvent.click(dialog.getByRole('button', { name: 'Sign off' }));
-    expect(await screen.findByText(/^Signed off by Cleo, 2026-12-01 10:00$/)).toBeTruthy();
+    expect(await screen.findByText(saying(/^Signed off by Cleo, 2026-12-01 10:00$/))).toBeTruthy();
     expect(sent).toMatchObject([{ body: { version: 12, comment } }]);
   });
 

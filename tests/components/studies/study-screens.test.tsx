@@ -13,6 +13,7 @@ import {
 } from '@/pricing/study';
 import type { Study, StudyRoute } from '@/shared/contracts/studies';
 import { playDialogs, playWindow } from '../browser';
+import { saying } from '../saying';
 import { desk, wheat } from '../../hooks/ticket-examples';
 
 jest.mock('expo-router', () => ({ useRouter: () => ({ push: jest.fn(), replace: jest.fn() }) }));
@@ -238,7 +239,7 @@ describe('the decision', () => {
     };
     playServer(studyWith([grid], { status: 'signed-off', decision }));
     open();
-    expect(await screen.findByText(/^Signed off by Noor Vale, /)).toBeTruthy();
+    expect(await screen.findByText(saying(/^Signed off by Noor Vale, /))).toBeTruthy();
     expect(screen.getByText(decision.comment)).toBeTruthy();
   });
 });

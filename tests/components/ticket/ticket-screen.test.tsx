@@ -7,6 +7,7 @@ import { price } from '@/pricing/index';
 import { pricingRequestOf } from '@/shared/quote-terms';
 import { formatNumber } from '@/shared/format/numbers';
 import { playDialogs, playWindow } from '../browser';
+import { saying } from '../saying';
 import { desk, wheat } from '../../hooks/ticket-examples';
 import { playServer } from './play-server';
 
@@ -62,7 +63,7 @@ describe('the ticket', () => {
     expect(screen.getByText('Routes agree')).toBeTruthy();
     const routes = screen.getByRole('table', { name: 'Why it can be trusted' });
     expect(within(routes).getAllByRole('row')).toHaveLength(4);
-    expect(screen.getByText('Market: close of 2026-11-30')).toBeTruthy();
+    expect(screen.getByText(saying(/^Market: close of 2026-11-30$/))).toBeTruthy();
   });
 
   it('follows the keys', async () => {

@@ -1,12 +1,13 @@
 /** A trade’s page: who is offered what, and what a binding act says before it is sent. */
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { render, screen, within } from '@testing-library/react';
+import { cleanup, render, screen, within } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import { differencesOf } from '@/components/trades/differences';
 import { TradeScreen } from '@/components/trades/trade-screen';
 import type { Trade } from '@/shared/contracts/trades';
 import type { DeskRole } from '@/shared/permissions';
 import { playDialogs, playWindow } from '../browser';
+import { saying } from '../saying';
 import {
   ada,
   amended,
@@ -45,6 +46,7 @@ async function open(role: DeskRole, userId: string) {
 beforeEach(() => {
   playWindow({ wide: true });
   playDialogs();
+  localStorage.clear();
   trade = tradeWith([version()]);
   answer = () => {
     trade = { ...trade, status: 'live', version: 5 };
@@ -140,11 +142,28 @@ test('a closing names amount and day before it is sent, and takes amounts as peo
   await open('desk-head', cleo.id);
   await press('Close trade');
   await userEvent.type(dialog().getByLabelText('Amount received'), '-1.25k');
-  expect(dialog().getByText(/is closed on .* for \u22121 250\.00 EUR/)).toBeTruthy();
+  expect(dialog().getByText(saying(/is closed on .* for \u22121 250\.00 EUR/))).toBeTruthy();
   await userEvent.type(dialog().getByLabelText('Reason'), 'Bought back early');
   await confirm('Close trade');
   expect(await screen.findByText('Trade T-0001 is closed.')).toBeTruthy();
   expect(sent[0].body).toMatchObject({ amount: '-1250', currency: 'EUR', version: 4 });
+});
+
+test('what is typed for a closing is kept over a reload until it is recorded', async () => {
+  trade = live();
+  await open('desk-head', cleo.id);
+  await press('Close trade');
+  await userEvent.type(dialog().getByLabelText('Reason'), 'Bought back early');
+  cleanup();
+  await open('desk-head', cleo.id);
+  await press('Close trade');
+  expect(dialog().getByLabelText('Reason')).toHaveProperty('value', 'Bought back early');
+  await userEvent.type(dialog().getByLabelText('Amount received'), '5');
+  await confirm('Close trade');
+  await screen.findByText('Trade T-0001 is closed.');
+  expect(
+    localStorage.getItem(`driftless.trade-close.${trade.id}.${cleo.id}.${deskOf('desk-head').id}`),
+  ).toBe('null');
 });
 
 test('an amendment shows only what it changes', async () => {
