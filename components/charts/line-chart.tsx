@@ -1,4 +1,4 @@
-import { extent, minIndex } from 'd3-array';
+import { extent, minIndex, tickStep } from 'd3-array';
 import { scaleLinear, scaleUtc } from 'd3-scale';
 import { line } from 'd3-shape';
 import { useState, type CSSProperties, type KeyboardEvent, type PointerEvent } from 'react';
@@ -6,6 +6,7 @@ import { StyleSheet, View } from 'react-native';
 import Svg, { Circle, Line, Path, Rect } from 'react-native-svg';
 import { Text } from '@/components/ui/text';
 import { color, space } from '@/constants/theme';
+import { formatNumber } from '@/shared/format/numbers';
 import { ChartLabel } from './chart-label';
 
 export type LinePoint = {
@@ -24,7 +25,6 @@ export type LineChartProps = {
   title: string;
   /** Oldest first. */
   points: readonly LinePoint[];
-  formatValue: (value: number) => string;
   /** Word of the marked points in the legend. */
   markedWord: string;
 };
@@ -51,7 +51,7 @@ function scalesOf(points: readonly LinePoint[], width: number) {
 type Scales = ReturnType<typeof scalesOf>;
 
 /** Values over time: a line to look along, with each point to be read by pointer or arrow keys. */
-export function LineChart({ title, points, formatValue, markedWord }: LineChartProps) {
+export function LineChart({ title, points, markedWord }: LineChartProps) {
   const [width, setWidth] = useState(480);
   const [chosen, setChosen] = useState<number | null>(null);
   const scales = scalesOf(points, width);
@@ -88,7 +88,7 @@ export function LineChart({ title, points, formatValue, markedWord }: LineChartP
         onPointerMove={onPointerMove}
         onPointerDown={onPointerMove}
       >
-        <Drawing {...{ points, scales, width, formatValue, chosen }} />
+        <Drawing {...{ points, scales, width, chosen }} />
       </div>
       <View style={styles.foot}>
         <Text size="small" tabular aria-live="polite">
@@ -114,35 +114,44 @@ function nearestTo(x: number, points: readonly LinePoint[], scales: Scales): num
   return minIndex(points, ({ at }) => Math.abs(scales.x(at) - x));
 }
 
-type DrawingProps = Pick<LineChartProps, 'points' | 'formatValue'> & {
+type DrawingProps = Pick<LineChartProps, 'points'> & {
   scales: Scales;
   width: number;
   chosen: number | null;
 };
 
+/** Places on the axis of values, with the decimals that tell them apart: steps are 1, 2 or 5 times a power of ten. */
+function marksOf(y: Scales['y']) {
+  const [low, high] = y.domain();
+  // A logarithm may be an ulp off.
+  const decimals = Math.max(0, Math.ceil(-Math.log10(tickStep(low, high, 4)) - 1e-9));
+  return y.ticks(4).map((value) => ({ value, at: y(value), label: formatNumber(value, decimals) }));
+}
+
 const day = (at: Date) => at.toISOString().slice(0, 10);
 
-function Drawing({ points, scales: { x, y }, width, formatValue, chosen }: DrawingProps) {
+function Drawing({ points, scales: { x, y }, width, chosen }: DrawingProps) {
   const path = line<LinePoint>()
     .defined(({ value }) => value !== null)
     .x(({ at }) => x(at))
     .y(({ value }) => y(value ?? 0))([...points]);
+  const marks = marksOf(y);
   const times = x.ticks(Math.max(2, Math.floor(width / 160)));
   return (
     <Svg width={width} height={height}>
-      {y.ticks(4).map((tick) => (
+      {marks.map(({ value, at }) => (
         <Line
-          key={tick}
+          key={value}
           x1={margin.left}
           x2={width - margin.right}
-          y1={y(tick)}
-          y2={y(tick)}
+          y1={at}
+          y2={at}
           stroke={color.line}
         />
       ))}
-      {y.ticks(4).map((tick) => (
-        <ChartLabel key={tick} x={margin.left - 8} y={y(tick) + 4} anchor="end">
-          {formatValue(tick)}
+      {marks.map(({ value, at, label }) => (
+        <ChartLabel key={value} x={margin.left - 8} y={at + 4} anchor="end">
+          {label}
         </ChartLabel>
       ))}
       {times.map((tick) => (

@@ -24,8 +24,10 @@ export function ExportSection({ deskId, filter }: { deskId: string; filter: Hist
   const busy = create.isPending || (exportId !== null && made?.status !== 'ready' && !error);
   return (
     <Section title={historyText.exportTitle}>
-      <Text tone="muted">{historyText.exportBody}</Text>
-      <View style={styles.acts}>
+      <View style={styles.line}>
+        <Text tone="muted" style={styles.body}>
+          {historyText.exportBody}
+        </Text>
         <Button
           kind="secondary"
           label={historyText.exportXlsx}
@@ -96,6 +98,8 @@ export function ExportFiles({ deskId, made }: { deskId: string; made: HistoryExp
 }
 
 const styles = StyleSheet.create({
+  line: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', gap: space.sm },
+  body: { flexGrow: 1, flexShrink: 1, flexBasis: 300 },
   acts: { flexDirection: 'row', flexWrap: 'wrap', gap: space.sm },
   progress: { gap: space.xs },
 });

@@ -8,6 +8,7 @@ import { historyText } from '@/constants/texts/history';
 import { space } from '@/constants/theme';
 import { verdicts } from '@/pricing/contract';
 import type { HistoryFilter } from '@/shared/contracts/history';
+import { isCalendarDate } from '@/shared/dates';
 import { useUnderlyings } from '@/hooks/use-underlyings';
 
 export type HistoryFiltersProps = {
@@ -114,16 +115,34 @@ function TypedFilter({ label, hint, value, onChange }: FilterFieldProps & { hint
   );
 }
 
-const DayFilter = ({ label, value, onChange }: FilterFieldProps) => (
-  <View style={styles.day}>
-    <TextField
-      label={label}
-      type="date"
-      value={value ?? ''}
-      onChangeText={(day) => onChange(day === '' ? undefined : day)}
-    />
-  </View>
-);
+/** A day is asked for once it is one; what is typed in between stays in the field. */
+function DayFilter({ label, value, onChange }: FilterFieldProps) {
+  const [typed, setTyped] = useState({ text: value ?? '', of: value });
+  const [left, setLeft] = useState(false);
+  const text = typed.of === value ? typed.text : (value ?? '');
+  const change = (next: string) => {
+    const day = next.trim();
+    const known = day === '' ? undefined : isCalendarDate(day) ? day : value;
+    setLeft(false);
+    setTyped({ text: next, of: known });
+    if (known !== value) onChange(known);
+  };
+  const wrong = text.trim() !== '' && !isCalendarDate(text.trim());
+  return (
+    <View style={styles.day}>
+      <TextField
+        label={label}
+        placeholder={historyText.dayHint}
+        inputMode="numeric"
+        maxLength={10}
+        value={text}
+        error={left && wrong ? historyText.noDay : undefined}
+        onChangeText={change}
+        onBlur={() => setLeft(true)}
+      />
+    </View>
+  );
+}
 
 const styles = StyleSheet.create({
   filters: { flexDirection: 'row', flexWrap: 'wrap', gap: space.sm },

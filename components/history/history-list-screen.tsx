@@ -49,10 +49,10 @@ export function HistoryListScreen({ desk, filter, onFilter }: HistoryListScreenP
       {filter.trade !== undefined && rows && rows.length > 1 ? (
         <ValueLine rows={rows} desk={desk} />
       ) : null}
-      <HistoryRows desk={desk} filter={filter} onFilter={onFilter} history={history} />
       {mayExport && rows && rows.length > 0 ? (
         <ExportSection key={JSON.stringify(filter)} deskId={desk.id} filter={filter} />
       ) : null}
+      <HistoryRows desk={desk} filter={filter} onFilter={onFilter} history={history} />
     </Screen>
   );
 }

@@ -50,6 +50,12 @@ export function ValueInputs({ value, desk }: FactsProps) {
   return (
     <Section title={valueText.inputsTitle}>
       <FactList facts={facts} />
+      <View style={styles.links}>
+        <Link href={`/desks/${desk.id}/market-data/${body.snapshotId}`}>
+          {valueText.openSnapshot}
+        </Link>
+        <Link href={`/desks/${desk.id}/policies`}>{valueText.openPolicies}</Link>
+      </View>
     </Section>
   );
 }

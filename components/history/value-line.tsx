@@ -15,7 +15,6 @@ import { decimalsOfValue, isException } from './history-words';
 export function ValueLine({ rows, desk }: { rows: readonly HistoryRow[]; desk: DeskAccess }) {
   const [shown, setShown] = useState(true);
   const [newest] = rows;
-  const decimals = decimalsOfValue(newest);
   const { currency, unit } = newest.underlying;
   return (
     <Section
@@ -32,7 +31,6 @@ export function ValueLine({ rows, desk }: { rows: readonly HistoryRow[]; desk: D
         <LineChart
           title={historyText.lineAxis(currency, unit)}
           points={rows.map((row) => pointOf(row, desk)).reverse()}
-          formatValue={(value) => formatNumber(value, decimals)}
           markedWord={historyText.exception}
         />
       ) : null}

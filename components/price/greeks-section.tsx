@@ -13,7 +13,7 @@ import { answerOf, type Evidence } from './evidence';
 
 type GreekLine = ShownGreek & { perUnit: AlignedText; positionText: string };
 
-/** The Greeks per unit and for the position, each with what it is per. */
+/** The Greeks per unit and, where there is one, for the position, each with what it is per. */
 export function GreeksSection({ evidence }: { evidence: Evidence }) {
   const answer = answerOf(evidence);
   if (!answer) return null;
@@ -24,7 +24,7 @@ export function GreeksSection({ evidence }: { evidence: Evidence }) {
         <DataTable
           plain
           caption={priceText.moves}
-          columns={columnsOf(currency)}
+          columns={evidence.position ? [...unitColumns, positionColumn(currency)] : unitColumns}
           rows={linesOf(answer.greeks, evidence.position, currency)}
           rowId={({ label, per }) => `${label} ${per}`}
         />
@@ -56,7 +56,7 @@ function Aligned({ text, padding }: AlignedText) {
   );
 }
 
-const columnsOf = (currency: string): Column<GreekLine>[] => [
+const unitColumns: Column<GreekLine>[] = [
   {
     id: 'sensitivity',
     header: priceText.sensitivity,
@@ -75,13 +75,14 @@ const columnsOf = (currency: string): Column<GreekLine>[] => [
     align: 'end',
     cell: ({ perUnit }) => <Aligned {...perUnit} />,
   },
-  {
-    id: 'position',
-    header: priceText.position(currency),
-    align: 'end',
-    cell: ({ positionText }) => positionText,
-  },
 ];
+
+const positionColumn = (currency: string): Column<GreekLine> => ({
+  id: 'position',
+  header: priceText.position(currency),
+  align: 'end',
+  cell: ({ positionText }) => positionText,
+});
 
 const styles = StyleSheet.create({
   section: { flexGrow: 1, paddingBottom: space.xs },

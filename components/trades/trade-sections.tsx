@@ -38,6 +38,9 @@ export function LastValueSection({ trade, desk }: SectionProps) {
       <View style={styles.links}>
         <Link href={`/desks/${desk.id}/runs/${last.runId}`}>{tradeText.openRun}</Link>
         <Link href={`/desks/${desk.id}/history?trade=${trade.number}`}>{tradeText.history}</Link>
+        {desk.permissions.includes('run-studies') ? (
+          <Link href={`/desks/${desk.id}/studies/new?trade=${trade.id}`}>{tradeText.study}</Link>
+        ) : null}
       </View>
     </Section>
   );

@@ -4,8 +4,10 @@ export const recomputeText = {
   body: 'Prices the stored inputs once more in this browser, by every route, and compares with what is on record.',
   act: 'Recompute',
   busy: 'Recomputing',
-  allSame: (count: number) =>
-    `Equal to the bit: ${count === 1 ? 'the one route' : `all ${count} routes`} gave the recorded value.`,
+  allSame: (count: number) => {
+    const routes = ['the one route', 'both routes'].at(count - 1) ?? `all ${count} routes`;
+    return `Equal to the bit: ${routes} gave the recorded value.`;
+  },
   someDiffer: 'Not equal to the bit; the differences stand below.',
   recomputed: 'recomputed',
   difference: 'difference',

@@ -55,6 +55,7 @@ export const tradeText = {
   total: 'Position',
   openRun: 'Open the run',
   history: 'Values over time',
+  study: 'Start a study',
 
   termsTitle: 'Terms in force',
   proposedTermsTitle: 'Proposed terms',

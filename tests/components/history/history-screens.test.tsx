@@ -10,6 +10,7 @@ import type { ValuationBody } from '@/shared/contracts/chain-bodies';
 import type { HistoryExport } from '@/shared/contracts/exports';
 import type { HistoryRow, HistoryValue } from '@/shared/contracts/history';
 import { playDialogs, playWindow } from '../browser';
+import { saying } from '../saying';
 import { desk, wheat } from '../../hooks/ticket-examples';
 
 jest.mock('expo-router', () => ({ useRouter: () => ({ push: jest.fn(), replace: jest.fn() }) }));
@@ -150,7 +151,7 @@ describe('the history', () => {
     inQueries(<HistoryListScreen desk={auditor} filter={{}} onFilter={jest.fn()} />);
     const table = await screen.findByRole('table', { name: historyText.caption });
     const [, newest] = within(table).getAllByRole('row');
-    expect(within(newest).getByText(/^2026-11-13/)).toBeTruthy();
+    expect(within(newest).getByText(saying(/^2026-11-13/))).toBeTruthy();
     expect(within(newest).getByRole('link', { name: 'T-0012' })).toBeTruthy();
     expect(within(newest).getByRole('link', { name: 'R-0007' })).toBeTruthy();
   });
@@ -176,9 +177,9 @@ describe('the history', () => {
     const chart = await screen.findByRole('application');
     expect(screen.getByText(historyText.exception)).toBeTruthy();
     fireEvent.keyDown(chart, { key: 'Home' });
-    expect(screen.getByText(/^2026-11-11 .*agree$/)).toBeTruthy();
+    expect(screen.getByText(saying(/^2026-11-11 .*agree$/))).toBeTruthy();
     fireEvent.keyDown(chart, { key: 'ArrowRight' });
-    expect(screen.getByText(/^2026-11-12 .*disagree$/)).toBeTruthy();
+    expect(screen.getByText(saying(/^2026-11-12 .*disagree$/))).toBeTruthy();
   });
 
   it('changes the filter once the typing has stopped', async () => {
@@ -187,6 +188,21 @@ describe('the history', () => {
     inQueries(<HistoryListScreen desk={auditor} filter={{}} onFilter={onFilter} />);
     await userEvent.type(await screen.findByLabelText(historyText.tradeField), 'T-0012');
     await waitFor(() => expect(onFilter).toHaveBeenLastCalledWith({ trade: 'T-0012' }));
+  });
+
+  it('asks for a day once it is one, and says how to type one that is not', async () => {
+    playServer(rows);
+    const onFilter = jest.fn();
+    inQueries(<HistoryListScreen desk={auditor} filter={{}} onFilter={onFilter} />);
+    const field = await screen.findByLabelText(historyText.from);
+    await userEvent.type(field, '2026-11-31');
+    await userEvent.tab();
+    expect(screen.getByText(historyText.noDay)).toBeTruthy();
+    expect(onFilter).not.toHaveBeenCalled();
+    await userEvent.clear(field);
+    await userEvent.type(field, '2026-11-30');
+    expect(onFilter).toHaveBeenLastCalledWith({ from: '2026-11-30' });
+    expect(screen.queryByText(historyText.noDay)).toBeNull();
   });
 
   it('exports what is filtered, and offers file and manifest', async () => {

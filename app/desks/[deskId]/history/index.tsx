@@ -5,10 +5,13 @@ import { Permitted } from '@/components/shell/permitted';
 import { useDesk } from '@/hooks/use-desk';
 import { verdicts } from '@/pricing/contract';
 import type { HistoryFilter } from '@/shared/contracts/history';
+import { isCalendarDate } from '@/shared/dates';
 
 type Params = Partial<
   Record<'trade' | 'run' | 'book' | 'underlying' | 'verdict' | 'from' | 'to', string>
 >;
+
+const dayOf = (text: string | undefined) => (text && isCalendarDate(text) ? text : undefined);
 
 /** The filters as they stand in the address; what is empty narrows nothing. */
 const filterOf = (params: Params): HistoryFilter => ({
@@ -17,8 +20,8 @@ const filterOf = (params: Params): HistoryFilter => ({
   bookId: params.book || undefined,
   underlyingId: params.underlying || undefined,
   verdict: verdicts.find((one) => one === params.verdict),
-  from: params.from || undefined,
-  to: params.to || undefined,
+  from: dayOf(params.from),
+  to: dayOf(params.to),
 });
 
 export default function HistoryRoute() {
