@@ -168,6 +168,7 @@ function Terms({ policy, before, underlyings }: TermsProps) {
     {
       id: 'underlying',
       header: policiesText.toleranceColumns.underlying,
+      nowrap: true,
       cell: ({ symbol }) => symbol,
     },
     {
