@@ -9,23 +9,35 @@ import { marketActText, marketDataText } from '@/constants/texts/market-data';
 import { ApiError } from '@/shared/api-client';
 import { reasonSchema } from '@/shared/contracts/common';
 import { newIdempotencyKey } from '@/hooks/api';
+import { forgetForm, keepForm, readKeptForm } from '@/hooks/kept-form';
+import { storeKey } from '@/hooks/local-store';
 import { useRestateSnapshot } from '@/hooks/use-market-data';
 import type { SnapshotDialogProps } from './approve-dialog';
 
 const restatementForm = z.object({ reason: reasonSchema });
 
 /** Opens a draft with the numbers of an approved close. */
-export function RestateDialog({ desk, snapshot, onClose }: SnapshotDialogProps) {
+export function RestateDialog({
+  desk,
+  userId,
+  snapshot,
+  onClose,
+}: SnapshotDialogProps & { userId: string }) {
   const router = useRouter();
   const { mutateAsync, isPending } = useRestateSnapshot(desk.id, snapshot.id);
   const [idempotencyKey] = useState(newIdempotencyKey);
   const [failure, setFailure] = useState<string | null>(null);
-  const form = useForm({ resolver: zodResolver(restatementForm), defaultValues: { reason: '' } });
+  const keptAs = storeKey(`restatement.${snapshot.id}`, userId, desk.id);
+  const form = useForm({
+    resolver: zodResolver(restatementForm),
+    defaultValues: readKeptForm(keptAs, { reason: '' }),
+  });
   const { field, fieldState } = useController({ control: form.control, name: 'reason' });
   const { onChange, ...rest } = field;
   const submit = form.handleSubmit(async ({ reason }) => {
     try {
       const { id } = await mutateAsync({ reason, idempotencyKey });
+      forgetForm(keptAs);
       onClose();
       router.push(`/desks/${desk.id}/market-data/${id}` as Href);
     } catch (error) {
@@ -52,7 +64,10 @@ export function RestateDialog({ desk, snapshot, onClose }: SnapshotDialogProps) 
         hint={marketActText.restateReasonHint}
         maxLength={500}
         required
-        onChangeText={onChange}
+        onChangeText={(reason) => {
+          onChange(reason);
+          keepForm(keptAs, { reason });
+        }}
         error={fieldState.error?.message}
       />
     </ConfirmDialog>

@@ -179,7 +179,7 @@ function Acts({ desk, userId, snapshot, onEdit }: PageProps & { onEdit: () => vo
         <ApproveDialog desk={desk} snapshot={snapshot} onClose={close} />
       ) : null}
       {dialog === 'restate' ? (
-        <RestateDialog desk={desk} snapshot={snapshot} onClose={close} />
+        <RestateDialog desk={desk} userId={userId} snapshot={snapshot} onClose={close} />
       ) : null}
     </>
   );

@@ -70,12 +70,12 @@ export function StudyCard({ study, desk }: { study: StudySummary; desk: DeskAcce
       <View style={styles.line}>
         <Link href={`/desks/${desk.id}/studies/${study.id}`}>{study.number}</Link>
         <State status={study.status} />
-        <Text size="small" tone="muted" tabular style={styles.end}>
-          {formatInstant(study.createdAt, desk.timeZone)} · {study.startedBy.name}
-        </Text>
       </View>
       <Terms study={study} />
       <StudyOrders study={study} />
+      <Text size="small" tone="muted" tabular>
+        {study.startedBy.name}, {formatInstant(study.createdAt, desk.timeZone)}
+      </Text>
     </Card>
   );
 }
@@ -83,5 +83,4 @@ export function StudyCard({ study, desk }: { study: StudySummary; desk: DeskAcce
 const styles = StyleSheet.create({
   card: { gap: 6, paddingVertical: space.md },
   line: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', columnGap: space.sm },
-  end: { marginLeft: 'auto' },
 });

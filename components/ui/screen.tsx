@@ -87,7 +87,7 @@ const styles = StyleSheet.create({
   main: { flexGrow: 1, padding: space.md, paddingBottom: space.xl, backgroundColor: color.ground },
   wide: { padding: space.xl, paddingTop: space.xl },
   column: { width: '100%', gap: space.lg },
-  stack: { gap: space.xs },
+  stack: { gap: space.sm },
   line: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', gap: space.md },
   words: { flexGrow: 1, flexShrink: 1, flexBasis: 120, gap: 2 },
   actions: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', gap: space.sm },
