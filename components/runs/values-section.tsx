@@ -45,7 +45,7 @@ export function ValuesSection(props: ValuesSectionProps) {
         <Filters {...props} />
       </View>
       <Values {...props} hidden={columns.hidden} />
-      {wide ? (
+      {wide && run.done > 0 ? (
         <View style={styles.foot}>
           <ColumnChoice columns={optionalColumns} {...columns} />
         </View>

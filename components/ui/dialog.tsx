@@ -18,7 +18,7 @@ export type DialogProps = {
 
 /**
  * The browser's own modal dialog: it traps focus and makes the page behind inert; when it closes,
- * focus goes back to where it was.
+ * focus goes back to where it was, or to the page where its act has taken that away.
  */
 export function Dialog({ title, open, onClose, children, actions, size = 'normal' }: DialogProps) {
   const element = useRef<HTMLDialogElement>(null);
@@ -32,7 +32,8 @@ export function Dialog({ title, open, onClose, children, actions, size = 'normal
     dialog?.querySelector<HTMLElement>('.field-input')?.focus();
     return () => {
       dialog?.close();
-      if (opener instanceof HTMLElement) opener.focus();
+      if (opener instanceof HTMLElement && opener.isConnected) opener.focus();
+      else document.getElementById('content')?.focus({ preventScroll: true });
     };
   }, [open]);
   if (!open) return null;

@@ -27,7 +27,7 @@ export const historyText = {
   from: 'From',
   to: 'To',
   dayHint: 'YYYY-MM-DD',
-  noDay: 'Type a day as YYYY-MM-DD.',
+  noDay: 'Type a day of the calendar as YYYY-MM-DD.',
   onlyBook: (code: string) => `Book ${code} only`,
   clear: 'Clear the filters',
   emptyTitle: 'Nothing is stored yet',

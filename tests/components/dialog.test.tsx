@@ -46,6 +46,28 @@ test.each([
   expect(document.activeElement).toBe(opener);
 });
 
+test('where its act takes away what opened it, focus goes to the page', async () => {
+  function Answerable() {
+    const [state, setState] = useState<'asked' | 'open' | 'answered'>('asked');
+    return (
+      <main id="content" tabIndex={-1}>
+        {state === 'answered' ? null : (
+          <>
+            <Button label="Open" onPress={() => setState('open')} />
+            <Dialog title="A question" open={state === 'open'} onClose={() => setState('answered')}>
+              <p>Words</p>
+            </Dialog>
+          </>
+        )}
+      </main>
+    );
+  }
+  render(<Answerable />);
+  await userEvent.click(screen.getByRole('button', { name: 'Open' }));
+  await userEvent.click(screen.getByRole('button', { name: 'Close' }));
+  expect(document.activeElement).toBe(screen.getByRole('main'));
+});
+
 test('a tap inside leaves it open, and the page behind keeps what was typed', async () => {
   render(<Page />);
   await userEvent.type(screen.getByLabelText('Note'), 'kept');
