@@ -56,19 +56,19 @@ function Figures({ valuation, deskId }: { valuation: RunValuation; deskId: strin
             ± {error}
           </Text>
         )}
-        <Text tabular size="small" tone="muted" style={styles.end}>
-          {change === null
-            ? valuesText.firstValue
-            : valuesText.since(formatDifference(change, decimalsOf(valuation)))}
-        </Text>
-      </View>
-      <View style={[styles.line, styles.centred]}>
-        {strip.length > 0 ? <AgreementStrip {...agreementOf(valuation)} size="row" /> : null}
         {total === null ? null : (
           <Text tabular weight="medium" style={styles.end}>
             {formatMoney(total, underlying.currency, 'always')}
           </Text>
         )}
+      </View>
+      <View style={[styles.line, styles.centred]}>
+        {strip.length > 0 ? <AgreementStrip {...agreementOf(valuation)} size="row" /> : null}
+        <Text tabular size="small" tone="muted" style={styles.end}>
+          {change === null
+            ? valuesText.firstValue
+            : valuesText.changed(formatDifference(change, decimalsOf(valuation)))}
+        </Text>
       </View>
     </>
   );

@@ -47,16 +47,16 @@ function CardValue({ trade }: { trade: TradeSummary }) {
         <Text tabular tone="muted">
           ± {formatErrorEstimate(last.errorEstimate)}
         </Text>
-        <Text tabular size="small" tone="muted" style={styles.end}>
-          {last.change === null
-            ? booksText.noChange
-            : booksText.changeSince(formatDifference(last.change, agreement.decimals))}
+        <Text tabular weight="medium" style={styles.end}>
+          {formatMoney(last.total, underlying.currency, 'always')}
         </Text>
       </View>
       <View style={[styles.line, styles.centred]}>
         <AgreementStrip {...agreement} size="row" />
-        <Text tabular weight="medium" style={styles.end}>
-          {formatMoney(last.total, underlying.currency, 'always')}
+        <Text tabular size="small" tone="muted" style={styles.end}>
+          {last.change === null
+            ? booksText.noChange
+            : booksText.changed(formatDifference(last.change, agreement.decimals))}
         </Text>
       </View>
     </>
