@@ -1,17 +1,15 @@
 import { useState } from 'react';
-import { StyleSheet, View } from 'react-native';
 import { ExportFiles } from '@/components/history/export-section';
-import { Button } from '@/components/ui/button';
+import { ListFoot } from '@/components/tables/list-foot';
 import { Section } from '@/components/ui/card';
 import { DataTable, type Column } from '@/components/ui/data-table';
-import { ErrorState, SkeletonRows } from '@/components/ui/states';
+import { SkeletonRows } from '@/components/ui/states';
 import { LinkButton } from '@/components/ui/text-field';
 import { Text } from '@/components/ui/text';
-import { chainText, historyText } from '@/constants/texts/history';
+import { chainText } from '@/constants/texts/history';
 import type { HistoryExport } from '@/shared/contracts/exports';
 import type { DeskAccess } from '@/shared/contracts/sessions';
 import { formatInstant } from '@/shared/format/dates';
-import { errorOf } from '@/hooks/error-of';
 import { useExports } from '@/hooks/use-exports';
 
 /** Every file that was made of the history, to be kept once more with its manifest. */
@@ -22,7 +20,6 @@ export function ExportsSection({ desk }: { desk: DeskAccess }) {
   const open = rows?.find(({ id }) => id === openId);
   return (
     <Section title={chainText.exportsTitle}>
-      {error ? <ErrorState {...errorOf(error)} onRetry={() => void list.refetch()} /> : null}
       {rows === undefined && !error ? <SkeletonRows rows={2} /> : null}
       {rows?.length === 0 ? <Text tone="muted">{chainText.noExports}</Text> : null}
       {rows && rows.length > 0 ? (
@@ -34,16 +31,7 @@ export function ExportsSection({ desk }: { desk: DeskAccess }) {
           rowId={({ id }) => id}
         />
       ) : null}
-      {list.hasNextPage ? (
-        <View style={styles.more}>
-          <Button
-            kind="secondary"
-            label={historyText.showMore}
-            busy={list.isFetchingNextPage}
-            onPress={() => void list.fetchNextPage()}
-          />
-        </View>
-      ) : null}
+      <ListFoot pages={list} />
       {open ? <ExportFiles deskId={desk.id} made={open} /> : null}
     </Section>
   );
@@ -69,5 +57,3 @@ const columnsOf = (desk: DeskAccess, open: (id: string) => void): Column<History
     cell: ({ createdAt }) => formatInstant(createdAt, desk.timeZone),
   },
 ];
-
-const styles = StyleSheet.create({ more: { alignItems: 'center' } });

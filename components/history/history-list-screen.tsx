@@ -1,4 +1,4 @@
-import { StyleSheet, View } from 'react-native';
+import { ListFoot } from '@/components/tables/list-foot';
 import { Button } from '@/components/ui/button';
 import { DataTable } from '@/components/ui/data-table';
 import { Screen } from '@/components/ui/screen';
@@ -60,11 +60,10 @@ export function HistoryListScreen({ desk, filter, onFilter }: HistoryListScreenP
 type HistoryRowsProps = HistoryListScreenProps & { history: ReturnType<typeof useHistory> };
 
 function HistoryRows({ desk, filter, onFilter, history }: HistoryRowsProps) {
-  const { data: rows, error, isError, hasNextPage, isFetchingNextPage } = history;
-  const failure = isError ? (
-    <ErrorState {...errorOf(error)} onRetry={() => void history.refetch()} />
-  ) : null;
-  if (!rows) return failure ?? <SkeletonRows rows={8} height={48} />;
+  const { data: rows, error, isError } = history;
+  if (isError && !rows)
+    return <ErrorState {...errorOf(error)} onRetry={() => void history.refetch()} />;
+  if (!rows) return <SkeletonRows rows={8} height={48} />;
   if (rows.length === 0) return <NoValues filter={filter} onFilter={onFilter} />;
   return (
     <>
@@ -77,17 +76,7 @@ function HistoryRows({ desk, filter, onFilter, history }: HistoryRowsProps) {
         rowHref={({ position }) => valueHref(desk, position)}
         card={(row) => <HistoryCard row={row} desk={desk} />}
       />
-      {failure}
-      {hasNextPage ? (
-        <View style={styles.more}>
-          <Button
-            kind="secondary"
-            label={historyText.showMore}
-            busy={isFetchingNextPage}
-            onPress={() => void history.fetchNextPage()}
-          />
-        </View>
-      ) : null}
+      <ListFoot pages={history} />
     </>
   );
 }
@@ -103,5 +92,3 @@ function NoValues({ filter, onFilter }: Pick<HistoryListScreenProps, 'filter' | 
     />
   );
 }
-
-const styles = StyleSheet.create({ more: { alignItems: 'center' } });

@@ -1,4 +1,5 @@
 import { StyleSheet, View } from 'react-native';
+import { ListFoot } from '@/components/tables/list-foot';
 import { Badge, type BadgeProps } from '@/components/ui/badge';
 import { Button } from '@/components/ui/button';
 import { Card } from '@/components/ui/card';
@@ -67,7 +68,7 @@ function EnterButton({ desk }: { desk: DeskAccess }) {
 
 function SnapshotRows({ desk, status, onStatus }: SnapshotListScreenProps) {
   const snapshots = useSnapshots(desk.id, status);
-  const { data: rows, error, isError, hasNextPage, isFetchingNextPage } = snapshots;
+  const { data: rows, error, isError } = snapshots;
   if (isError && !rows)
     return <ErrorState {...errorOf(error)} onRetry={() => void snapshots.refetch()} />;
   if (!rows) return <SkeletonRows rows={6} height={56} />;
@@ -98,16 +99,7 @@ function SnapshotRows({ desk, status, onStatus }: SnapshotListScreenProps) {
         rowHref={({ id }) => `/desks/${desk.id}/market-data/${id}`}
         card={(row) => <SnapshotCard snapshot={row} desk={desk} />}
       />
-      {hasNextPage ? (
-        <View style={styles.more}>
-          <Button
-            kind="secondary"
-            label={marketDataText.showMore}
-            busy={isFetchingNextPage}
-            onPress={() => void snapshots.fetchNextPage()}
-          />
-        </View>
-      ) : null}
+      <ListFoot pages={snapshots} more={marketDataText.showMore} />
     </>
   );
 }
@@ -185,7 +177,6 @@ function SnapshotCard({ snapshot, desk }: { snapshot: SnapshotSummary; desk: Des
 
 const styles = StyleSheet.create({
   filter: { maxWidth: 260 },
-  more: { alignItems: 'center' },
   card: { gap: 4, paddingVertical: space.md },
   line: { flexDirection: 'row', alignItems: 'center', gap: space.sm },
 });

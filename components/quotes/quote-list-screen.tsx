@@ -1,5 +1,6 @@
 import { useEffect, useState } from 'react';
 import { StyleSheet, View } from 'react-native';
+import { ListFoot } from '@/components/tables/list-foot';
 import { Button } from '@/components/ui/button';
 import { DataTable } from '@/components/ui/data-table';
 import { Screen } from '@/components/ui/screen';
@@ -76,7 +77,7 @@ function Filters({ filter, onFilter }: Omit<QuoteListScreenProps, 'desk'>) {
 
 function QuoteRows({ desk, filter, onFilter }: QuoteListScreenProps) {
   const quotes = useQuotes(desk.id, filter);
-  const { data: rows, error, isError, hasNextPage, isFetchingNextPage } = quotes;
+  const { data: rows, error, isError } = quotes;
   if (isError && !rows)
     return <ErrorState {...errorOf(error)} onRetry={() => void quotes.refetch()} />;
   if (!rows) return <SkeletonRows rows={8} height={48} />;
@@ -92,17 +93,7 @@ function QuoteRows({ desk, filter, onFilter }: QuoteListScreenProps) {
         rowHref={({ id }) => `/desks/${desk.id}/quotes/${id}`}
         card={(row) => <QuoteCard quote={row} desk={desk} />}
       />
-      {isError ? <ErrorState {...errorOf(error)} onRetry={() => void quotes.refetch()} /> : null}
-      {hasNextPage ? (
-        <View style={styles.more}>
-          <Button
-            kind="secondary"
-            label={quotesText.showMore}
-            busy={isFetchingNextPage}
-            onPress={() => void quotes.fetchNextPage()}
-          />
-        </View>
-      ) : null}
+      <ListFoot pages={quotes} />
     </>
   );
 }
@@ -140,5 +131,4 @@ const styles = StyleSheet.create({
   filters: { flexDirection: 'row', flexWrap: 'wrap', gap: space.sm },
   search: { flexGrow: 1, flexShrink: 1, flexBasis: 180, maxWidth: 420 },
   verdict: { flexGrow: 1, flexShrink: 1, flexBasis: 130, maxWidth: 220 },
-  more: { alignItems: 'center' },
 });

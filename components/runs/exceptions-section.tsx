@@ -1,10 +1,10 @@
 import { StyleSheet, View } from 'react-native';
-import { Button } from '@/components/ui/button';
+import { ListFoot } from '@/components/tables/list-foot';
 import { SelectField } from '@/components/ui/select-field';
 import { ErrorState, SkeletonRows } from '@/components/ui/states';
 import { Heading, Text } from '@/components/ui/text';
 import { useWide } from '@/components/ui/use-wide';
-import { exceptionText, runsText } from '@/constants/texts/runs';
+import { exceptionText } from '@/constants/texts/runs';
 import { space } from '@/constants/theme';
 import {
   exceptionKinds,
@@ -98,7 +98,7 @@ function useLinkedException(
 function Cards(props: ExceptionsSectionProps) {
   const { desk, userId, run, openId, filter, onOpen, onRerun } = props;
   const exceptions = useRunExceptions(desk.id, run, filter);
-  const { data: rows, error, isError, hasNextPage, isFetchingNextPage } = exceptions;
+  const { data: rows, error, isError } = exceptions;
   const wide = useWide();
   const linked = useLinkedException(props, rows);
   if (isError && !rows)
@@ -127,19 +127,7 @@ function Cards(props: ExceptionsSectionProps) {
           </View>
         ))}
       </View>
-      {isError ? (
-        <ErrorState {...errorOf(error)} onRetry={() => void exceptions.refetch()} />
-      ) : null}
-      {hasNextPage ? (
-        <View style={styles.more}>
-          <Button
-            kind="secondary"
-            label={runsText.showMore}
-            busy={isFetchingNextPage}
-            onPress={() => void exceptions.fetchNextPage()}
-          />
-        </View>
-      ) : null}
+      <ListFoot pages={exceptions} />
     </>
   );
 }
@@ -165,5 +153,4 @@ const styles = StyleSheet.create({
   cards: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'flex-start', gap: space.lg },
   whole: { width: '100%' },
   half: { flexGrow: 1, flexShrink: 1, flexBasis: '45%', maxWidth: '49.4%', minWidth: 0 },
-  more: { alignItems: 'center' },
 });

@@ -1,4 +1,5 @@
 import { StyleSheet, View } from 'react-native';
+import { ListFoot } from '@/components/tables/list-foot';
 import { Button } from '@/components/ui/button';
 import { DataTable } from '@/components/ui/data-table';
 import { Screen } from '@/components/ui/screen';
@@ -95,7 +96,7 @@ function NoRuns({ desk, filter, onFilter }: RunListScreenProps) {
 function RunRows(props: RunListScreenProps) {
   const { desk, filter } = props;
   const runs = useRuns(desk.id, filter);
-  const { data: rows, error, isError, hasNextPage, isFetchingNextPage } = runs;
+  const { data: rows, error, isError } = runs;
   if (isError && !rows)
     return <ErrorState {...errorOf(error)} onRetry={() => void runs.refetch()} />;
   if (!rows) return <SkeletonRows rows={6} height={56} />;
@@ -111,17 +112,7 @@ function RunRows(props: RunListScreenProps) {
         rowHref={({ id }) => `/desks/${desk.id}/runs/${id}`}
         card={(run) => <RunCard run={run} desk={desk} />}
       />
-      {isError ? <ErrorState {...errorOf(error)} onRetry={() => void runs.refetch()} /> : null}
-      {hasNextPage ? (
-        <View style={styles.more}>
-          <Button
-            kind="secondary"
-            label={runsText.showMore}
-            busy={isFetchingNextPage}
-            onPress={() => void runs.fetchNextPage()}
-          />
-        </View>
-      ) : null}
+      <ListFoot pages={runs} />
     </>
   );
 }
@@ -129,5 +120,4 @@ function RunRows(props: RunListScreenProps) {
 const styles = StyleSheet.create({
   filters: { flexDirection: 'row', flexWrap: 'wrap', gap: space.sm },
   field: { flexGrow: 1, flexShrink: 1, flexBasis: 140, maxWidth: 260 },
-  more: { alignItems: 'center' },
 });

@@ -1,5 +1,6 @@
 import { lazy, Suspense } from 'react';
 import { StyleSheet, View } from 'react-native';
+import { ListFoot } from '@/components/tables/list-foot';
 import { ColumnChoice } from '@/components/trades/column-choice';
 import { Button } from '@/components/ui/button';
 import { SelectField } from '@/components/ui/select-field';
@@ -92,7 +93,7 @@ const noFilter: ValueFilter = { verdict: null, bookId: null };
 function Values(props: ValuesSectionProps & { hidden: readonly string[] }) {
   const { desk, run, filter, onFilter, hidden } = props;
   const values = useRunValuations(desk.id, run, filter);
-  const { data: rows, error, isError, hasNextPage, isFetchingNextPage } = values;
+  const { data: rows, error, isError } = values;
   if (isError && !rows)
     return <ErrorState {...errorOf(error)} onRetry={() => void values.refetch()} />;
   const filtered = filter.verdict !== null || filter.bookId !== null;
@@ -110,21 +111,7 @@ function Values(props: ValuesSectionProps & { hidden: readonly string[] }) {
   return (
     <>
       <Rows rows={rows} desk={desk} hidden={hidden} />
-      {isError ? <ErrorState {...errorOf(error)} onRetry={() => void values.refetch()} /> : null}
-      <View style={styles.more}>
-        {hasNextPage ? (
-          <Button
-            kind="secondary"
-            label={valuesText.showMore}
-            busy={isFetchingNextPage}
-            onPress={() => void values.fetchNextPage()}
-          />
-        ) : (
-          <Text size="small" tone="muted">
-            {valuesText.loadedAll(rows.length)}
-          </Text>
-        )}
-      </View>
+      <ListFoot pages={values} end={valuesText.loadedAll(rows.length)} />
     </>
   );
 }
@@ -169,7 +156,6 @@ const styles = StyleSheet.create({
   },
   field: { flexGrow: 1, flexShrink: 1, flexBasis: 140, minWidth: 140 },
   cards: { gap: space.sm },
-  more: { alignItems: 'center' },
   foot: { alignItems: 'flex-end' },
   nothing: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', gap: space.sm },
 });

@@ -1,4 +1,5 @@
 import { StyleSheet, View } from 'react-native';
+import { ListFoot } from '@/components/tables/list-foot';
 import { Button } from '@/components/ui/button';
 import { DataTable } from '@/components/ui/data-table';
 import { Screen } from '@/components/ui/screen';
@@ -45,7 +46,7 @@ function StartButton({ desk }: { desk: DeskAccess }) {
 
 function StudyRows({ desk, status, onStatus }: StudyListScreenProps) {
   const studies = useStudies(desk.id, status);
-  const { data: rows, error, isError, hasNextPage, isFetchingNextPage } = studies;
+  const { data: rows, error, isError } = studies;
   if (isError && !rows)
     return <ErrorState {...errorOf(error)} onRetry={() => void studies.refetch()} />;
   if (!rows) return <SkeletonRows rows={6} height={56} />;
@@ -76,21 +77,11 @@ function StudyRows({ desk, status, onStatus }: StudyListScreenProps) {
         rowHref={({ id }) => `/desks/${desk.id}/studies/${id}`}
         card={(row) => <StudyCard study={row} desk={desk} />}
       />
-      {hasNextPage ? (
-        <View style={styles.more}>
-          <Button
-            kind="secondary"
-            label={studiesText.showMore}
-            busy={isFetchingNextPage}
-            onPress={() => void studies.fetchNextPage()}
-          />
-        </View>
-      ) : null}
+      <ListFoot pages={studies} />
     </>
   );
 }
 
 const styles = StyleSheet.create({
   filter: { maxWidth: 260 },
-  more: { alignItems: 'center' },
 });

@@ -1,8 +1,8 @@
 import { lazy, Suspense } from 'react';
 import { StyleSheet, View } from 'react-native';
+import { ListFoot } from '@/components/tables/list-foot';
 import { Button } from '@/components/ui/button';
 import { EmptyState, ErrorState, SkeletonRows } from '@/components/ui/states';
-import { Text } from '@/components/ui/text';
 import { useWide } from '@/components/ui/use-wide';
 import { booksText } from '@/constants/texts/books';
 import { space } from '@/constants/theme';
@@ -60,7 +60,7 @@ type TradeRowsProps = TradeListProps & { hidden: readonly string[] };
 function TradeRows({ desk, caption, filter, onFilter, hidden }: TradeRowsProps) {
   const trades = useTrades(desk.id, filter);
   const wide = useWide();
-  const { data: rows, error, isError, hasNextPage, isFetchingNextPage } = trades;
+  const { data: rows, error, isError } = trades;
   if (isError && !rows)
     return <ErrorState {...errorOf(error)} onRetry={() => void trades.refetch()} />;
   if (!rows) return <SkeletonRows rows={8} height={64} />;
@@ -81,21 +81,7 @@ function TradeRows({ desk, caption, filter, onFilter, hidden }: TradeRowsProps) 
       ) : (
         <Cards caption={caption} trades={rows} deskId={desk.id} />
       )}
-      {isError ? <ErrorState {...errorOf(error)} onRetry={() => void trades.refetch()} /> : null}
-      <View style={styles.more}>
-        {hasNextPage ? (
-          <Button
-            kind="secondary"
-            label={booksText.showMore}
-            busy={isFetchingNextPage}
-            onPress={() => void trades.fetchNextPage()}
-          />
-        ) : (
-          <Text size="small" tone="muted">
-            {booksText.loadedAll(rows.length)}
-          </Text>
-        )}
-      </View>
+      <ListFoot pages={trades} end={booksText.loadedAll(rows.length)} />
     </>
   );
 }
@@ -152,6 +138,5 @@ function NoTrades({
 
 const styles = StyleSheet.create({
   cards: { gap: space.sm },
-  more: { alignItems: 'center' },
   foot: { alignItems: 'flex-end' },
 });

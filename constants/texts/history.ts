@@ -15,7 +15,6 @@ export const historyText = {
   book: 'book',
   run: 'run',
   noValue: 'no value',
-  showMore: 'Show more',
   tradeField: 'Trade',
   tradeHint: 'Number, such as T-0012',
   runField: 'Run',

@@ -13,7 +13,6 @@ export const quotesText = {
   agreement: 'agreement',
   total: 'position',
   saved: 'saved',
-  showMore: 'Show more',
   emptyTitle: 'No quotes yet',
   emptyBody: 'A price that is saved from the ticket is kept here, priced again by the server.',
   openTicket: 'Open the ticket',

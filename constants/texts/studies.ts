@@ -63,7 +63,6 @@ export const studiesText = {
   nothingTitle: 'No study in this state',
   nothingBody: 'Choose another state, or show all.',
   showAll: 'Show all',
-  showMore: 'Show more',
   state: 'State',
   stateColumn: 'state',
   anyState: 'any',

@@ -4,6 +4,7 @@ export const uiText = {
   cancel: 'Cancel',
   tryAgain: 'Try again',
   loading: 'Loading',
+  showMore: 'Show more',
   requestId: (id: string) => `Request id ${id}`,
   skipToContent: 'Skip to the content',
   product: 'Driftless',
