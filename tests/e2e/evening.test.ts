@@ -132,7 +132,12 @@ async function startRun(page: Page): Promise<string> {
   await expectSound(page);
   await act(page, 'Start the run').click();
   await page.waitForURL(/\/runs\/[0-9a-f-]{36}$/);
-  await page.getByRole('heading', { level: 1, name: /agree/ }).waitFor({ timeout: workTimeoutMs });
+  const outcome = page.getByRole('heading', { level: 1, name: /agree/ });
+  await outcome.waitFor({ timeout: workTimeoutMs });
+  // As whoever comes later finds it: rows that still arrive would move what is looked at.
+  await page.reload();
+  await outcome.waitFor();
+  await page.waitForLoadState('networkidle');
   await expectSound(page);
   return page.url();
 }
