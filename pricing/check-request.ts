@@ -29,6 +29,7 @@ const settingsOf: Record<MethodName, readonly (Size | 'smoothing' | 'beyondStabi
   'lattice-symmetric': ['steps', 'smoothing'],
   'heat-explicit': ['spaceSteps', 'timeSteps', 'smoothing', 'beyondStability'],
   'heat-implicit': ['spaceSteps', 'timeSteps', 'smoothing'],
+  'spectral-boundary': ['nodes'],
 };
 
 /** Fields of the request shape that no priced payoff or market uses yet. */
@@ -46,6 +47,7 @@ const labels: Record<Limited | Size, string> = {
   spaceSteps: 'number of space steps',
   timeSteps: 'number of time steps',
   steps: 'number of steps',
+  nodes: 'number of nodes',
 };
 
 /** What a number outside its limits most often got wrong. */

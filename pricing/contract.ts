@@ -59,6 +59,8 @@ export type MethodSettings = {
   timeSteps?: number;
   /** Steps of the walk (lattice methods). */
   steps?: number;
+  /** Nodes of the exercise boundary (collocation). */
+  nodes?: number;
   /** How a lattice value is refined; `none` gives the plain value of the stated tree. */
   smoothing?: 'none' | 'richardson';
   /** Runs an explicit grid past its stability limit on purpose, to show what happens there. */

@@ -58,4 +58,5 @@ export const sizeLimits = {
   spaceSteps: { min: 10, max: 4000 },
   timeSteps: { min: 4, max: 4000 },
   steps: { min: 1, max: 5000 },
+  nodes: { min: 16, max: 64 },
 } as const;

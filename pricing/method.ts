@@ -43,7 +43,7 @@ export type Method = {
   name: MethodName;
   label: string;
   summary: string;
-  /** Order in the step of space (grids) or in the reciprocal of steps (walks); null: exact. */
+  /** Order in the step of space (grids) or in the reciprocal of steps (walks); null: exact, or faster than any order. */
   theoreticalOrder: number | null;
   /**
    * A scheme that is stable up to a fixed k/h² only: by how much a study multiplies the time steps

@@ -26,6 +26,7 @@ export const methodNames = [
   'lattice-symmetric',
   'heat-explicit',
   'heat-implicit',
+  'spectral-boundary',
 ] as const;
 
 /** Rows of a study that belong together: walks of odd and even length err in their own ways. */

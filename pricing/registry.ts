@@ -6,6 +6,7 @@ import { heatExplicit } from '@/pricing/methods/heat-explicit';
 import { heatImplicit } from '@/pricing/methods/heat-implicit';
 import { latticeCrr } from '@/pricing/methods/lattice-crr';
 import { latticeSymmetric } from '@/pricing/methods/lattice-symmetric';
+import { spectralBoundary } from '@/pricing/methods/spectral-boundary';
 
 /**
  * The one list of methods, the most accurate first: the first that prices a contract is what a
@@ -18,6 +19,7 @@ export const methods: readonly Method[] = [
   latticeCrr,
   heatImplicit,
   heatExplicit,
+  spectralBoundary,
 ];
 
 export function methodNamed(name: MethodName): Method {

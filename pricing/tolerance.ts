@@ -71,7 +71,7 @@ function candidatesOf(method: Method): Candidate[] {
 function doubled(settings: MethodSizes): MethodSizes | null {
   const next = { ...settings };
   let sized = false;
-  for (const size of ['spaceSteps', 'timeSteps', 'steps'] as const) {
+  for (const size of ['spaceSteps', 'timeSteps', 'steps', 'nodes'] as const) {
     const before = settings[size];
     if (before === undefined) continue;
     if (2 * before > sizeLimits[size].max) return null;

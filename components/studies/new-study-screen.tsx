@@ -154,7 +154,10 @@ function freeSource(terms: PricedTerms): Source {
   };
 }
 
-const refinable = methodNames.filter((name) => name !== 'closed-form');
+/** Those whose error falls with a fixed order. */
+const refinable = methodNames.filter(
+  (name) => name !== 'closed-form' && name !== 'spectral-boundary',
+);
 const first: MethodName = 'heat-crank-nicolson';
 const rowChoices = Array.from({ length: studyRows.max - studyRows.min + 1 }, (_, i) =>
   String(studyRows.min + i),

@@ -9,6 +9,7 @@ const routeLabels: Record<MethodName, string> = {
   'lattice-symmetric': 'Plain walk',
   'heat-explicit': 'Explicit grid',
   'heat-implicit': 'Implicit grid',
+  'spectral-boundary': 'Exercise boundary',
 };
 
 export const routeLabel = (name: MethodName): string => routeLabels[name];

@@ -8,6 +8,7 @@ const schemes: Record<MethodName, string> = {
   'heat-crank-nicolson': 'Crank–Nicolson with four damped half-steps',
   'heat-explicit': 'the explicit step at a fixed k/h²',
   'heat-implicit': 'the implicit step',
+  'spectral-boundary': 'the collocation',
   'lattice-crr': 'the binomial tree',
   'lattice-symmetric': 'the plain walk',
 };

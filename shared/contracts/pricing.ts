@@ -40,6 +40,7 @@ export const methodSettingsSchema = z.strictObject({
   spaceSteps: sizeOf('Intervals of the space grid'),
   timeSteps: sizeOf('Intervals of the time grid'),
   steps: sizeOf('Steps of the walk'),
+  nodes: sizeOf('Nodes of the exercise boundary'),
   smoothing: z.enum(['none', 'richardson']).optional().describe('How a lattice value is refined'),
   beyondStability: z
     .boolean()

@@ -21,9 +21,10 @@ export const optionTerms = (terms: OptionTerms, priceDecimals = 2): string =>
     terms.expiryDate,
   ].join(', ');
 
-/** The sizes that a route really used: `200 × 100`, `1 000 steps`; empty where it has none. */
-export function routeSizes({ spaceSteps, timeSteps, steps }: MethodSettings): string {
+/** The sizes that a route really used: `200 × 100`, `1 000 steps`, `16 nodes`; empty where it has none. */
+export function routeSizes({ spaceSteps, timeSteps, steps, nodes }: MethodSettings): string {
   if (spaceSteps !== undefined && timeSteps !== undefined)
     return [formatQuantity(spaceSteps), '×', formatQuantity(timeSteps)].join(hardSpace);
+  if (nodes !== undefined) return `${formatQuantity(nodes)}${hardSpace}nodes`;
   return steps === undefined ? '' : `${formatQuantity(steps)}${hardSpace}steps`;
 }
