@@ -13,7 +13,8 @@ export type Boundary = { table: SpectralTable; height: Float64Array; rounds: num
 
 const mostRounds = 30;
 /** Relative move of a height at which the iteration ends; the error left is about its square. */
-const fineTolerance = 1e-6;
+const fineTolerance = 1e-5;
+const otherTolerance = 1e-4;
 const roughTolerance = 1e-2;
 const smallestHeight = 1e-12;
 
@@ -37,11 +38,16 @@ export function solveBoundary(problem: BoundaryProblem, nodes: number): SolvedBo
   let asked: Boundary | null = null;
   for (const size of sizesTo(nodes)) {
     before = asked;
-    asked = solveAfter(before, problem, size, size < 0.7 * nodes ? roughTolerance : fineTolerance);
+    asked = solveAfter(before, problem, size, toleranceOf(size / nodes));
   }
   if (asked === null) return null;
-  const other = before ?? solveAfter(asked, problem, Math.round(1.5 * nodes), fineTolerance);
+  const other = before ?? solveAfter(asked, problem, Math.round(1.5 * nodes), otherTolerance);
   return other && { asked, other };
+}
+
+function toleranceOf(share: number): number {
+  if (share < 0.7) return roughTolerance;
+  return share < 1 ? otherTolerance : fineTolerance;
 }
 
 /** From the solution before, where there is one and it leads there, else from a first guess. */
@@ -55,11 +61,6 @@ function solveAfter(
   const from = (height: Float64Array) => solveFrom(problem, table, height, tolerance);
   const solved = before && from(refined(before, table));
   return solved ?? from(firstGuess(problem, table)) ?? from(slowGuess(problem, table));
-}
-
-/** The same nodes for a problem that differs a little, started from its neighbour's boundary. */
-export function solveNearby(problem: BoundaryProblem, known: Boundary): Boundary | null {
-  return solveFrom(problem, known.table, known.height.slice(), fineTolerance);
 }
 
 function solveFrom(
@@ -118,7 +119,7 @@ function refined({ table, height: coarse }: Boundary, { nodes, z }: SpectralTabl
       const slope = endSlope + bend * log(z[i] / end);
       height[i] = Math.max(slope, 0.3 * endSlope) * z[i] * z[i];
     } else {
-      interpolationRow(table.nodes, z[i], row);
+      interpolationRow(table.z, z[i], row);
       height[i] = lookedUp(table.nodes, row, 0, coarse);
     }
     if (!(height[i] > smallestHeight)) height[i] = smallestHeight;

@@ -27,7 +27,7 @@ export function solveHeights(
   let last = Infinity;
   let share = 1;
   for (let round = 1; round <= mostRounds; round++) {
-    evaluateResidual(table, problem, height);
+    evaluateResidual(table, problem, height, true);
     const size = largestOf(residual);
     const worse = !(size < last) && last > roundingOfResidual;
     if (round > 1 && worse && share > shortestStep) {

@@ -1,14 +1,17 @@
 import type { Contract, Market } from '@/pricing/contract';
 import { rateBumpOf, type RateSensitivities } from '@/pricing/greeks';
-import { solveNearby, type Boundary } from '@/pricing/spectral/boundary';
+import { solveDense } from '@/pricing/numerics/dense';
+import type { Boundary } from '@/pricing/spectral/boundary';
 import { earlyExercisePremium } from '@/pricing/spectral/premium';
 import { problemOf, regionsOf, type BoundaryProblem } from '@/pricing/spectral/problem';
+import { evaluateResidual, fillGrowth } from '@/pricing/spectral/residual';
 
 /**
- * A fiftieth of the move that a grid needs: the collocation's error moves smoothly with the rates and
+ * A two-hundredth of the move that a grid needs: the collocation's error moves smoothly with the rates and
  * its rounding is near 1e-15, so that the difference is wrong by its own square only.
  */
-const shareOfGridBump = 0.02;
+const shareOfGridBump = 0.005;
+const mostHalvings = 12;
 
 /** By how many bumps the market is moved, and with which weight the value counts. */
 type Difference = readonly { bumps: number; weight: number }[];
@@ -28,10 +31,11 @@ const downwards: Difference = upwards.map(({ bumps, weight }) => ({
 }));
 
 /**
- * The premium's derivatives by rate and yield, by differences of second order between boundaries that
- * are solved anew. Where the exercise region changes its kind within a bump (rate zero, or rate
- * and yield equal), the boundary has a kink there: the difference is then taken to one side.
- * Null where a moved boundary does not converge.
+ * The premium's derivatives by rate and yield. How the boundary moves follows from its equation: the
+ * heights' slopes solve J·H′ = −R′, J the derivatives by the heights and R′ the residuals' difference in
+ * the rate. The premium is then the difference of second order along rate and heights together.
+ * Where the exercise region changes its kind within a bump (rate zero, or rate and yield equal) the
+ * boundary has a kink, and the differences are taken to one side of it. Null where none is free.
  */
 export function premiumRates(
   contract: Contract,
@@ -41,16 +45,21 @@ export function premiumRates(
   unit: number,
 ): { bump: number; sensitivities: RateSensitivities } | null {
   const bump = bumpOf(contract, market);
+  const problem = problemOf(contract, market, 0, 0);
+  const { table, height } = boundary;
+  fillGrowth(table, problem.carry);
+  evaluateResidual(table, problem, height, true);
+  const jacobian = table.work.jacobian.slice();
   const along = (rateBy: number, yieldBy: number) =>
-    slopeAlong(boundary, x, bump, (bumps) =>
-      problemOf(contract, market, bumps * bump * rateBy, bumps * bump * yieldBy),
+    slopeAlong(boundary, jacobian, x, bump, (by) =>
+      problemOf(contract, market, by * rateBy, by * yieldBy),
     );
   if ('carry' in market) {
     const both = along(1, 1);
     return both === null ? null : { bump, sensitivities: { rho: unit * both, yieldRho: null } };
   }
   const rho = along(1, 0);
-  const yieldRho = rho === null ? null : along(0, 1);
+  const yieldRho = along(0, 1);
   if (rho === null || yieldRho === null) return null;
   return { bump, sensitivities: { rho: unit * rho, yieldRho: unit * yieldRho } };
 }
@@ -76,23 +85,43 @@ export function changesWithinBump(contract: Contract, market: Market): boolean {
 }
 
 function slopeAlong(
-  boundary: Boundary,
+  { table, height }: Boundary,
+  jacobian: Float64Array,
   x: number,
   bump: number,
-  moved: (bumps: number) => BoundaryProblem,
+  moved: (by: number) => BoundaryProblem,
 ): number | null {
-  const kind = regionsOf(moved(0));
-  const staysFor = (difference: Difference) =>
-    difference.every(({ bumps }) => regionsOf(moved(bumps)) === kind);
-  const difference = [central, upwards, downwards].find(staysFor) ?? central;
+  const free = freeDifference(bump, moved);
+  if (free === null) return null;
+  const { difference, size } = free;
+  const slope = new Float64Array(table.nodes);
+  for (const { bumps, weight } of difference) {
+    const problem = moved(bumps * size);
+    fillGrowth(table, problem.carry);
+    evaluateResidual(table, problem, height, false);
+    for (let i = 0; i < slope.length; i++) slope[i] -= (weight / size) * table.work.residual[i];
+  }
+  table.work.jacobian.set(jacobian);
+  solveDense(table.nodes, table.work.jacobian, slope);
   let sum = 0;
   for (const { bumps, weight } of difference) {
-    const problem = moved(bumps);
-    const regions = regionsOf(problem);
-    if (regions === 'none') continue;
-    const solved = regions === 'two' ? null : solveNearby(problem, boundary);
-    if (solved === null) return null;
-    sum += weight * earlyExercisePremium(problem, solved, x).value;
+    const at = { table, height: height.map((h, i) => h + bumps * size * slope[i]), rounds: 0 };
+    sum += weight * earlyExercisePremium(moved(bumps * size), at, x).value;
   }
-  return sum / bump;
+  return sum / size;
+}
+
+/** The difference, and the largest size of its bumps, that stays within one kind of region. */
+function freeDifference(
+  bump: number,
+  moved: (by: number) => BoundaryProblem,
+): { difference: Difference; size: number } | null {
+  const kind = regionsOf(moved(0));
+  for (let halvings = 0, size = bump; halvings < mostHalvings; halvings++, size /= 2) {
+    const difference = [central, upwards, downwards].find((candidate) =>
+      candidate.every(({ bumps }) => regionsOf(moved(bumps * size)) === kind),
+    );
+    if (difference) return { difference, size };
+  }
+  return null;
 }

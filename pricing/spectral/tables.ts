@@ -17,6 +17,7 @@ export type SpectralTable = {
   points: number;
   z: Float64Array;
   sine: Float64Array;
+  inverseSine: Float64Array;
   cosine: Float64Array;
   /** Weight in θ times the derivative of cos²θ. */
   weight: Float64Array;
@@ -45,6 +46,7 @@ export type Workspace = {
   distance: Float64Array;
   kernel: Float64Array;
   carried: Float64Array;
+  slopes: Float64Array;
   /** e^(κτ·cos²θ) per node and point: the same in all rounds of a solve. */
   growth: Float64Array;
   /** One number handed from one part of a row to the next. */
@@ -75,7 +77,7 @@ function makeTable(nodes: number): SpectralTable {
   for (let i = 0; i < nodes; i++) {
     for (let j = 0; j < points; j++) {
       const from = (i * points + j) * nodes;
-      interpolationRow(nodes, z[i] * cosine[j], lookUp.subarray(from, from + nodes));
+      interpolationRow(z, z[i] * cosine[j], lookUp.subarray(from, from + nodes));
     }
   }
   return {
@@ -83,15 +85,17 @@ function makeTable(nodes: number): SpectralTable {
     points,
     z,
     sine,
+    inverseSine: sine.map((s) => 1 / s),
     cosine,
     weight: rule.weights.map((weight, j) => 2 * weight * sine[j] * cosine[j]),
     lookUp,
-    premium: makePremiumTable(nodes),
+    premium: makePremiumTable(z),
     work: makeWorkspace(nodes, points),
   };
 }
 
-function makePremiumTable(nodes: number): PremiumTable {
+function makePremiumTable(z: Float64Array): PremiumTable {
+  const nodes = z.length;
   const points = 2 * nodes;
   const rule = gaussLegendre(points, 0, 1);
   const sine = new Float64Array(points);
@@ -102,7 +106,7 @@ function makePremiumTable(nodes: number): PremiumTable {
     const theta = 0.5 * PI * y * y;
     sine[j] = sin(theta);
     weight[j] = 2 * rule.weights[j] * PI * y * sine[j] * cos(theta);
-    interpolationRow(nodes, cos(theta), lookUp.subarray(j * nodes, (j + 1) * nodes));
+    interpolationRow(z, cos(theta), lookUp.subarray(j * nodes, (j + 1) * nodes));
   }
   return { points, sine, weight, lookUp };
 }
@@ -117,17 +121,19 @@ function makeWorkspace(nodes: number, points: number): Workspace {
     distance: new Float64Array(points),
     kernel: new Float64Array(points),
     carried: new Float64Array(points),
+    slopes: new Float64Array(points),
     growth: new Float64Array(nodes * points),
     total: new Float64Array(1),
   };
 }
 
-/** Barycentric weights of the nodes for the polynomial at z; the node z = 0 has the value 0. */
-export function interpolationRow(nodes: number, z: number, row: Float64Array): void {
+/** Barycentric weights of the nodes z for the polynomial at a point; where z = 0 its value is 0. */
+export function interpolationRow(z: Float64Array, at: number, row: Float64Array): void {
+  const nodes = z.length;
   let total = 0;
   let sign = 1;
   for (let i = 0; i <= nodes; i++) {
-    const gap = z - (1 + cos((PI * i) / nodes)) / 2;
+    const gap = at - (i < nodes ? z[i] : 0);
     if (gap === 0) {
       row.fill(0);
       if (i < nodes) row[i] = 1;
@@ -141,14 +147,28 @@ export function interpolationRow(nodes: number, z: number, row: Float64Array): v
   for (let i = 0; i < nodes; i++) row[i] /= total;
 }
 
-/** The polynomial through H at the nodes, by one row of interpolation weights. */
+/**
+ * The polynomial through H at the nodes, by one row of interpolation weights. Four sums at a time: one
+ * alone would wait for each addition to end before the next.
+ */
 export function lookedUp(
   nodes: number,
   lookUp: Float64Array,
   row: number,
   height: Float64Array,
 ): number {
-  let sum = 0;
-  for (let k = 0, at = row * nodes; k < nodes; k++, at++) sum += lookUp[at] * height[k];
-  return sum;
+  let a = 0;
+  let b = 0;
+  let c = 0;
+  let d = 0;
+  let k = 0;
+  let at = row * nodes;
+  for (; k + 3 < nodes; k += 4, at += 4) {
+    a += lookUp[at] * height[k];
+    b += lookUp[at + 1] * height[k + 1];
+    c += lookUp[at + 2] * height[k + 2];
+    d += lookUp[at + 3] * height[k + 3];
+  }
+  for (; k < nodes; k++, at++) a += lookUp[at] * height[k];
+  return a + b + (c + d);
 }

@@ -31,14 +31,14 @@ it.each(problems)('the derivatives are the slopes of the residuals: %p', (proble
   const table = spectralTable(10);
   const height = table.z.map((z) => (0.9 * problem.deviation * z) ** 2 * (1 + 0.1 * z));
   fillGrowth(table, problem.carry);
-  evaluateResidual(table, problem, height);
+  evaluateResidual(table, problem, height, true);
   const jacobian = table.work.jacobian.slice();
   for (let k = 0; k < 10; k++) {
     const move = 1e-6 * height[k];
     const residuals = [1, -1].map((sign) => {
       const moved = height.slice();
       moved[k] += sign * move;
-      evaluateResidual(table, problem, moved);
+      evaluateResidual(table, problem, moved, false);
       return table.work.residual.slice();
     });
     for (let i = 0; i < 10; i++) {
