@@ -45,6 +45,10 @@ export type Method = {
   summary: string;
   /** Order in the step of space (grids) or in the reciprocal of steps (walks); null: exact, or faster than any order. */
   theoreticalOrder: number | null;
+  /** Where early exercise costs a method its order: what is left of it. */
+  americanOrder?: number;
+  /** A walk that exists for odd numbers of steps only. */
+  oddSteps?: true;
   /**
    * A scheme that is stable up to a fixed k/h² only: by how much a study multiplies the time steps
    * where it doubles the space steps, and sizes past the limit, to show what happens there.

@@ -2,7 +2,14 @@
  * The engine's door to convergence studies: plan a ladder, run it row by row, say what the rows show.
  * It stands beside `index.ts`, so that a browser that only prices does not load the statistics.
  */
-import type { Contract, LadderStep, Market, MethodName, StudyRow } from '@/pricing/contract';
+import type {
+  Contract,
+  LadderStep,
+  Market,
+  MethodName,
+  PricedExercise,
+  StudyRow,
+} from '@/pricing/contract';
 import { methodNamed, methods } from '@/pricing/registry';
 
 export { planLadder, type LadderBase } from '@/pricing/study/ladder';
@@ -10,8 +17,9 @@ export { studyReference } from '@/pricing/study/reference';
 export { summariseStudy } from '@/pricing/study/summary';
 
 /** The order that the registry promises; null where there is nothing to refine. */
-export function theoreticalOrder(name: MethodName): number | null {
-  return methodNamed(name).theoreticalOrder;
+export function theoreticalOrder(name: MethodName, exercise: PricedExercise): number | null {
+  const { theoreticalOrder: order, americanOrder } = methodNamed(name);
+  return exercise === 'american' ? (americanOrder ?? order) : order;
 }
 
 /** The methods that a study of this contract can take, in the registry's order. */

@@ -62,20 +62,24 @@ function candidatesOf(method: Method): Candidate[] {
   let settings: MethodSizes | null = method.coarsestSettings;
   while (settings !== null) {
     candidates.push({ method, settings, work: method.work(settings) });
-    settings = doubled(settings);
+    settings = doubled(method, settings);
   }
   return candidates;
 }
 
-/** Null where a size would pass its cap, or where there is none to double. */
-function doubled(settings: MethodSizes): MethodSizes | null {
+/**
+ * Null where a size would pass its cap, or where there is none to double. A walk of odd sizes goes
+ * to the odd size above.
+ */
+function doubled({ oddSteps }: Method, settings: MethodSizes): MethodSizes | null {
   const next = { ...settings };
   let sized = false;
   for (const size of ['spaceSteps', 'timeSteps', 'steps', 'nodes'] as const) {
     const before = settings[size];
     if (before === undefined) continue;
-    if (2 * before > sizeLimits[size].max) return null;
-    next[size] = 2 * before;
+    const after = oddSteps ? 2 * before + 1 : 2 * before;
+    if (after > sizeLimits[size].max) return null;
+    next[size] = after;
     sized = true;
   }
   return sized ? next : null;

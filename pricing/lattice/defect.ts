@@ -24,9 +24,10 @@ export function defectDoubt(
   const { strike, expiry, kind, exercise } = contract;
   const { spot, rate } = market;
   const carry = carryYield(market);
-  const growth = exp(walk.step);
-  const ofBond = (walk.up + walk.down) * exp((rate * expiry) / steps) - 1;
-  const ofSpot = (walk.up * growth + walk.down / growth) * exp((carry * expiry) / steps) - 1;
+  const rise = exp(walk.growth * walk.step);
+  const ofBond = (walk.up + walk.middle + walk.down) * exp((rate * expiry) / steps) - 1;
+  const moved = walk.up * rise + walk.middle + walk.down / rise;
+  const ofSpot = moved * exp(walk.drift + (carry * expiry) / steps) - 1;
   const defect = steps * Math.max(Math.abs(ofBond), Math.abs(ofSpot));
   if (defect > asymptotic) {
     return Math.min(defect, 1) * (strike * exp(-rate * expiry) + spot * exp(-carry * expiry));

@@ -1,4 +1,5 @@
-import { makePowers, rollBack, type RollBackTerms } from '@/pricing/lattice/roll-back';
+import { longestLead, type Roll } from '@/pricing/lattice/roll';
+import type { RollBackTerms } from '@/pricing/lattice/roll-back';
 import type { WalkStep } from '@/pricing/lattice/walk';
 import { exp, log } from '@/pricing/numerics/elementary';
 import { interpolate, type LocalValue } from '@/pricing/numerics/interpolation';
@@ -6,25 +7,18 @@ import { interpolate, type LocalValue } from '@/pricing/numerics/interpolation';
 /** The value and its derivatives in x = ln(spot), at the spot and now. */
 export type LatticeLocal = LocalValue & { exercised: boolean };
 
-export type LatticeRun = {
-  terms: RollBackTerms;
-  walk: WalkStep;
-  steps: number;
-  powers: Float64Array;
-};
+export type LatticeRun = { terms: RollBackTerms; walk: WalkStep; steps: number; roll: Roll };
+
+export type ReadLattice = (run: LatticeRun) => LatticeLocal;
 
 const plainLead = 2;
-const smoothLead = 6;
+const smoothLead = longestLead;
 const shifts = [-0.75, -0.25, 0.25, 0.75];
 const prunedDeviations = 7;
 
-export function powersFor(walk: WalkStep, steps: number): Float64Array {
-  return makePowers(walk.step, steps + smoothLead);
-}
-
 /** The stated tree, every node of it; derivatives by its three nodes of now. */
-export function plainLocal({ terms, walk, steps, powers }: LatticeRun): LatticeLocal {
-  const values = rollBack(terms, walk, powers, steps, plainLead, 0, null);
+export function plainLocal({ terms, walk, steps, roll }: LatticeRun): LatticeLocal {
+  const values = roll(walk, steps, plainLead, 0, null);
   const x = Float64Array.of(-2 * walk.step, 0, 2 * walk.step);
   const { first, second } = interpolate(x, values, 0, 3, 0);
   return { value: values[1], first, second, exercised: isExercised(terms, values[1], 0) };
@@ -36,12 +30,12 @@ export function plainLocal({ terms, walk, steps, powers }: LatticeRun): LatticeL
  * value of a single walk up and down as n grows; over a full period that cancels, and what is left
  * falls smoothly like 1/n, so that it can be extrapolated.
  */
-export function smoothLocal({ terms, walk, steps, powers }: LatticeRun): LatticeLocal {
+export function smoothLocal({ terms, walk, steps, roll }: LatticeRun): LatticeLocal {
   const deviations = prunedDeviations + walk.step * Math.sqrt(steps);
   const mean: LatticeLocal = { value: 0, first: 0, second: 0, exercised: true };
   for (const fraction of shifts) {
-    const shift = shiftOf(terms, walk.step, steps + smoothLead, fraction);
-    const values = rollBack(terms, walk, powers, steps, smoothLead, shift, deviations);
+    const shift = shiftOf(terms, walk, steps, fraction);
+    const values = roll(walk, steps, smoothLead, shift, deviations);
     const local = readAtSpot(terms, values, walk.step, shift);
     mean.value += local.value / shifts.length;
     mean.first += local.first / shifts.length;
@@ -51,9 +45,22 @@ export function smoothLocal({ terms, walk, steps, powers }: LatticeRun): Lattice
   return mean;
 }
 
+/**
+ * The stated tree, less the nodes beyond its reach, read through as many nodes of now as the smooth
+ * ones are: for a walk that is laid out for its strike and must not be shifted.
+ */
+export function prunedLocal({ terms, walk, steps, roll }: LatticeRun): LatticeLocal {
+  const deviations = prunedDeviations + walk.step * Math.sqrt(steps);
+  const values = roll(walk, steps, smoothLead, 0, deviations);
+  const local = readAtSpot(terms, values, walk.step, 0);
+  return local.exercised ? local : { ...local, value: values[smoothLead / 2] };
+}
+
 /** The shift within (−h, h] that puts the strike at `fraction` of a step from a last node. */
-function shiftOf({ spot, strike }: RollBackTerms, step: number, last: number, fraction: number) {
-  const place = log(strike / spot) / step + fraction - last;
+function shiftOf({ spot, strike }: RollBackTerms, walk: WalkStep, steps: number, fraction: number) {
+  const { step, drift, growth } = walk;
+  const last = growth * steps + smoothLead;
+  const place = (log(strike / spot) - steps * drift) / step + fraction - last;
   return (place - 2 * Math.ceil((place - 1) / 2)) * step;
 }
 

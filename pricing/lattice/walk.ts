@@ -1,15 +1,28 @@
 import { exp, expm1 } from '@/pricing/numerics/elementary';
 
 /**
- * One step of a recombining walk in x = ln(spot): up or down by `step`, with weights that hold the
- * probability and the discount of the step. The value before a step is down·V⁻ + up·V⁺.
+ * One step of a recombining walk in x = ln(spot): by drift ± step where it has two branches, by
+ * drift and drift ± 2·step where it has three, so that the nodes of one instant always lie 2·step
+ * apart. The weights hold the probability and the discount of the step; the value before it is
+ * down·V⁻ + middle·V⁰ + up·V⁺. `growth` is the number of nodes that a step adds: 1 or 2.
  */
-export type WalkStep = { step: number; up: number; down: number; upProbability: number };
+export type WalkStep = {
+  step: number;
+  drift: number;
+  growth: 1 | 2;
+  up: number;
+  middle: number;
+  down: number;
+  upProbability: number;
+};
 
 export type WalkTerms = { rate: number; yield: number; volatility: number };
 
-/** Null where the walk does not exist for so long a step. */
-export type MakeWalkStep = (terms: WalkTerms, timeStep: number) => WalkStep | null;
+/** The step of a walk of so many steps of so long; null where it does not exist. */
+export type MakeWalkStep = (terms: WalkTerms, timeStep: number, steps: number) => WalkStep | null;
+
+/** Two branches, as far up as down. */
+export const levelStep = { drift: 0, growth: 1, middle: 0 } as const;
 
 /**
  * Cox, Ross and Rubinstein (1979): u = e^(σ√Δt), d = 1/u and p = (e^((r−q)Δt) − d)/(u − d), which
@@ -21,7 +34,7 @@ export const crrStep: MakeWalkStep = ({ rate, yield: carry, volatility }, timeSt
   const p = (expm1((rate - carry) * timeStep) - down) / (expm1(step) - down);
   if (!(p > 0 && p < 1)) return null;
   const discount = exp(-rate * timeStep);
-  return { step, up: discount * p, down: discount * (1 - p), upProbability: p };
+  return { ...levelStep, step, up: discount * p, down: discount * (1 - p), upProbability: p };
 };
 
 /**
@@ -41,7 +54,7 @@ export const symmetricStep: MakeWalkStep = ({ rate, yield: carry, volatility }, 
   const decay = 0.5 * exp(0.5 * beta * step * step);
   const up = decay * exp(-tilt);
   const down = decay * exp(tilt);
-  return { step, up, down, upProbability: up / (up + down) };
+  return { ...levelStep, step, up, down, upProbability: up / (up + down) };
 };
 
 /** α and β of V = e^(αx+βτ)·u. */

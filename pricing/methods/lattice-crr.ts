@@ -28,15 +28,15 @@
  * Financial Economics 7 (1979). The shifted mean is this module's own.
  */
 import type { Contract, Market, PricingResult } from '@/pricing/contract';
+import { crrLattice } from '@/pricing/lattice/kind';
 import { priceOnLattice } from '@/pricing/lattice/price';
-import { crrStep } from '@/pricing/lattice/walk';
 import type { Method, MethodSizes } from '@/pricing/method';
 
 const defaults = { steps: 1000, smoothing: 'richardson' } as const;
 
 function price(contract: Contract, market: Market, settings: MethodSizes): PricingResult {
   const { steps, smoothing } = { ...defaults, ...settings };
-  const result = priceOnLattice(contract, market, { steps, smoothing }, crrStep);
+  const result = priceOnLattice(contract, market, { steps, smoothing }, crrLattice);
   if (!result.ok) return result;
   return { ...result, method: { name: 'lattice-crr', steps, smoothing }, warnings: [] };
 }

@@ -28,9 +28,9 @@
  * as a pricing tree is common practice.
  */
 import type { Contract, Market, PricingResult } from '@/pricing/contract';
+import { symmetricLattice } from '@/pricing/lattice/kind';
 import { priceOnLattice } from '@/pricing/lattice/price';
 import { europeanBothWays } from '@/pricing/lattice/random-walk';
-import { symmetricStep } from '@/pricing/lattice/walk';
 import type { Method, MethodSizes } from '@/pricing/method';
 
 const defaults = { steps: 1000, smoothing: 'richardson' } as const;
@@ -38,7 +38,7 @@ const defaults = { steps: 1000, smoothing: 'richardson' } as const;
 function price(contract: Contract, market: Market, settings: MethodSizes): PricingResult {
   const sizes = { ...defaults, ...settings };
   const { steps, smoothing } = sizes;
-  const result = priceOnLattice(contract, market, sizes, symmetricStep);
+  const result = priceOnLattice(contract, market, sizes, symmetricLattice);
   if (!result.ok) return result;
   const bothWays =
     contract.exercise === 'european' ? europeanBothWays(contract, market, steps) : null;

@@ -13,7 +13,7 @@ const shownPastLimit = 1;
  * The settings of a study of one method, coarsest first, each size at least twice the one before,
  * as many as the caps allow. The plain scheme is studied (`smoothing: 'none'`), because that is
  * what the theoretical order speaks of. Walks get a ladder of odd and one of even lengths, side by
- * side; a scheme with a stability limit gets one more row past it. A method without sizes (the
+ * side, where they exist for both; a scheme with a stability limit gets one more row past it. A method without sizes (the
  * closed form) has nothing to refine: no rows.
  */
 export function planLadder(
@@ -32,7 +32,7 @@ function walkLadder(method: Method, { firstSize, rows }: LadderBase): LadderStep
   const first = firstSize ?? method.coarsestSettings.steps ?? sizeLimits.steps.min;
   const steps: LadderStep[] = [];
   const add = (series: 'even' | 'odd', size: number) => {
-    if (size > sizeLimits.steps.max) return;
+    if (size > sizeLimits.steps.max || (method.oddSteps && series === 'even')) return;
     const settings = settingsOf(method, { steps: size });
     steps.push({ ordinal: steps.length, series, size, settings, pastLimit: false });
   };

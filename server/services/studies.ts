@@ -29,7 +29,7 @@ type Request = { contract: Contract; market: Market };
 
 function planned({ contract, market }: Request, ladder: StudyLadder, index: number): PlannedLadder {
   const { name, firstSize, rows } = ladder;
-  const order = theoreticalOrder(name);
+  const order = theoreticalOrder(name, contract.exercise);
   const steps: LadderStep[] =
     order === null ? [] : planLadder(name, contract, market, { firstSize, rows });
   if (order !== null) return { name, theoreticalOrder: order, steps };

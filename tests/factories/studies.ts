@@ -49,7 +49,7 @@ export async function makeStudy(
   status: 'queued' | 'finished' = 'finished',
 ) {
   const name = 'heat-crank-nicolson';
-  const order = theoreticalOrder(name);
+  const order = theoreticalOrder(name, contract.exercise);
   const reference = studyReference(contract, market);
   if (order === null || 'ok' in reference) throw new Error('the terms cannot be studied');
   const steps = planLadder(name, contract, market, { rows: 3 });

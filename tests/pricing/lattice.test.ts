@@ -3,6 +3,7 @@
  * (digits recalled from memory, as their rows say), and what a refused walk must say.
  */
 import { rollBack, makePowers } from '@/pricing/lattice/roll-back';
+import { levelStep } from '@/pricing/lattice/walk';
 import { latticeCrr } from '@/pricing/methods/lattice-crr';
 import { latticeSymmetric } from '@/pricing/methods/lattice-symmetric';
 import type { Contract, PricingSuccess, SpotMarket } from '@/pricing/contract';
@@ -64,7 +65,7 @@ describe('the roll-back on trees of whole numbers (up 2, down ½, growth 5/4, pr
   it.each(rows)('$id', ({ inputs, expected }) => {
     const { spot, strike, steps } = inputs;
     const kind = inputs.kind === 'call' ? 'call' : 'put';
-    const walk = { step: Math.LN2, up: 0.4, down: 0.4, upProbability: 0.5 };
+    const walk = { ...levelStep, step: Math.LN2, up: 0.4, down: 0.4, upProbability: 0.5 };
     const valueOf = (american: boolean) => {
       const terms = { spot, strike, kind, american } as const;
       return rollBack(terms, walk, makePowers(walk.step, steps), steps, 0, 0, null)[0];

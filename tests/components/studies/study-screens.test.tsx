@@ -37,7 +37,7 @@ function referenceOf() {
 
 /** What the server would send of one method, with so many of its rows done. */
 function routeWith(name: MethodName, rows: number, done = Infinity): StudyRoute {
-  const order = theoreticalOrder(name);
+  const order = theoreticalOrder(name, contract.exercise);
   if (order === null) throw new Error(`${name} has nothing to refine`);
   const steps = planLadder(name, contract, market, { rows });
   const computed = steps.slice(0, done).map((step) => runStudyRow(contract, market, step));

@@ -36,7 +36,7 @@ function referenceOf(contract: Contract, at: SpotMarket): StudyReference {
 }
 
 function study(name: MethodName, contract: Contract, at: SpotMarket, rows: number) {
-  const order = theoreticalOrder(name);
+  const order = theoreticalOrder(name, contract.exercise);
   if (order === null) throw new Error(`${name} has nothing to refine`);
   const reference = referenceOf(contract, at);
   const run = planLadder(name, contract, at, { rows }).map((step) =>
