@@ -30,6 +30,10 @@ const settingsOf: Record<MethodName, readonly (Size | 'smoothing' | 'beyondStabi
   'heat-explicit': ['spaceSteps', 'timeSteps', 'smoothing', 'beyondStability'],
   'heat-implicit': ['spaceSteps', 'timeSteps', 'smoothing'],
   'spectral-boundary': ['nodes'],
+  'lattice-jarrow-rudd': ['steps', 'smoothing'],
+  'lattice-tian': ['steps', 'smoothing'],
+  'lattice-trinomial': ['steps', 'smoothing'],
+  'lattice-leisen-reimer': ['steps', 'smoothing'],
 };
 
 /** Fields of the request shape that no priced payoff or market uses yet. */

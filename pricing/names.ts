@@ -27,6 +27,10 @@ export const methodNames = [
   'heat-explicit',
   'heat-implicit',
   'spectral-boundary',
+  'lattice-jarrow-rudd',
+  'lattice-tian',
+  'lattice-trinomial',
+  'lattice-leisen-reimer',
 ] as const;
 
 /** Rows of a study that belong together: walks of odd and even length err in their own ways. */

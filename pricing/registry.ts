@@ -5,8 +5,12 @@ import { heatCrankNicolson } from '@/pricing/methods/heat-crank-nicolson';
 import { heatExplicit } from '@/pricing/methods/heat-explicit';
 import { heatImplicit } from '@/pricing/methods/heat-implicit';
 import { latticeCrr } from '@/pricing/methods/lattice-crr';
+import { latticeJarrowRudd } from '@/pricing/methods/lattice-jarrow-rudd';
+import { latticeLeisenReimer } from '@/pricing/methods/lattice-leisen-reimer';
 import { latticeSymmetric } from '@/pricing/methods/lattice-symmetric';
 import { spectralBoundary } from '@/pricing/methods/spectral-boundary';
+import { latticeTian } from '@/pricing/methods/lattice-tian';
+import { latticeTrinomial } from '@/pricing/methods/lattice-trinomial';
 
 /**
  * The one list of methods, the most accurate first: the first that prices a contract is what a
@@ -20,6 +24,10 @@ export const methods: readonly Method[] = [
   heatImplicit,
   heatExplicit,
   spectralBoundary,
+  latticeJarrowRudd,
+  latticeTian,
+  latticeTrinomial,
+  latticeLeisenReimer,
 ];
 
 export function methodNamed(name: MethodName): Method {

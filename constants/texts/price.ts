@@ -10,13 +10,19 @@ const routeLabels: Record<MethodName, string> = {
   'heat-explicit': 'Explicit grid',
   'heat-implicit': 'Implicit grid',
   'spectral-boundary': 'Exercise boundary',
+  'lattice-jarrow-rudd': 'Jarrow–Rudd walk',
+  'lattice-tian': 'Tian walk',
+  'lattice-trinomial': 'Trinomial walk',
+  'lattice-leisen-reimer': 'Leisen–Reimer walk',
 };
 
 export const routeLabel = (name: MethodName): string => routeLabels[name];
 
-/** The same within a sentence; capitals that are no beginning stay. */
+/** The same within a sentence; capitals that are no beginning stay, and so do people’s. */
 export const routeInSentence = (name: MethodName): string =>
-  routeLabels[name].replace(/^[A-Z](?=[a-z])/, (first) => first.toLowerCase());
+  routeLabels[name].replace(/^(?!Jarrow|Tian|Leisen)[A-Z](?=[a-z])/, (first) =>
+    first.toLowerCase(),
+  );
 
 export const priceText = {
   title: 'Price',

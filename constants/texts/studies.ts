@@ -11,6 +11,10 @@ const schemes: Record<MethodName, string> = {
   'spectral-boundary': 'the collocation',
   'lattice-crr': 'the binomial tree',
   'lattice-symmetric': 'the plain walk',
+  'lattice-jarrow-rudd': 'the tree of Jarrow and Rudd',
+  'lattice-tian': 'the tree of Tian',
+  'lattice-trinomial': 'the tree of three branches',
+  'lattice-leisen-reimer': 'the tree of Leisen and Reimer',
 };
 
 const seriesWords = { all: 'Order', odd: 'Odd lengths: order', even: 'Even lengths: order' };
@@ -164,7 +168,7 @@ export const newStudyText = {
   freeNote: 'The terms as they stand on your ticket; a change here is a change there.',
   methodsTitle: 'Methods and ladders',
   methodsNote:
-    'Each size is at least twice the one before. Walks are run with odd and even lengths side by side; the explicit grid adds one row past its limit.',
+    'Each size is at least twice the one before. Walks are run with odd and even lengths side by side, that of Leisen and Reimer with odd lengths only; the explicit grid adds one row past its limit.',
   rows: 'Rows in each ladder',
   rowsHint: 'An order needs three; a further row costs about four times the one before.',
   chooseMethod: 'Choose at least one method.',
