@@ -33,14 +33,24 @@ export type OptionKind = (typeof optionKinds)[number];
 export type PricedExercise = (typeof pricedExercises)[number];
 export type MethodName = (typeof methodNames)[number];
 
-/** The terms that decide a payoff. `strike` in the quote currency, `expiry` in years from now. */
-export type Contract = {
-  payoff: 'vanilla';
+/** `strike` in the quote currency, `expiry` in years from now. */
+type ContractTerms = {
   exercise: PricedExercise;
   kind: OptionKind;
   strike: number;
   expiry: number;
 };
+
+export type VanillaContract = { payoff: 'vanilla' } & ContractTerms;
+
+/** Pays all or nothing: `cash` in the quote currency, or one unit of the underlying. */
+export type DigitalContract = (
+  { payoff: 'cash-or-nothing'; cash: number } | { payoff: 'asset-or-nothing' }
+) &
+  ContractTerms;
+
+/** The terms that decide a payoff. */
+export type Contract = VanillaContract | DigitalContract;
 
 /** A share, an index or a currency pair: `yield` is the dividend yield or the foreign rate. */
 export type SpotMarket = { spot: number; rate: number; yield: number; volatility: number };

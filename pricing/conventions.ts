@@ -42,6 +42,8 @@ export function carryYield(market: Market): number {
  */
 export const numberLimits = {
   strike: { min: 1e-12, max: 1e12 },
+  /** What a digital option pays, per one unit of the underlying. */
+  cash: { min: 1e-12, max: 1e12 },
   spot: { min: 1e-12, max: 1e12 },
   /** From half a minute to a century. */
   expiry: { min: 1e-6, max: 100 },

@@ -8,6 +8,7 @@ import {
   type Contract,
   type Market,
   type MethodName,
+  type PricingFailure,
   type PricingRequest,
   type PricingResult,
 } from '@/pricing/contract';
@@ -40,7 +41,21 @@ export function price(input: unknown): PricingResult {
   }
   if (choice === undefined) return able[0].price(contract, market, {});
   const { name, ...settings } = choice;
-  return methodNamed(name).price(contract, market, settings);
+  return (
+    refusePayoff(contract, market, name) ?? methodNamed(name).price(contract, market, settings)
+  );
+}
+
+/** No method but the closed form knows payoffs other than vanilla, and none is asked for one. */
+function refusePayoff(contract: Contract, market: Market, name: MethodName): PricingFailure | null {
+  const method = methodNamed(name);
+  if (contract.payoff === 'vanilla' || method.prices(contract, market)) return null;
+  return {
+    ok: false,
+    code: 'method-does-not-price',
+    path: 'contract.payoff',
+    message: `The method “${method.label}” does not price the payoff “${contract.payoff}”: choose the closed form.`,
+  };
 }
 
 /** The routes that a cross-check of this contract takes: three at most, the most accurate first. */
@@ -68,7 +83,10 @@ export function priceRouteWithin(
 ): PricingResult {
   const checked = checkRequest({ contract, market, method: { tolerance } });
   if (!checked.ok) return { ok: false, ...checked.issues[0] };
-  return priceRefined(contract, market, tolerance, methodNamed(name));
+  return (
+    refusePayoff(contract, market, name) ??
+    priceRefined(contract, market, tolerance, methodNamed(name))
+  );
 }
 
 /** The verdict over the routes that gave a price; `tolerance` in the unit of the values. */
@@ -87,6 +105,7 @@ export function impliedVolatility(request: PricingRequest, premium: number): Sol
   const market = { ...request.market, volatility: 0.2 };
   const checked = checkRequest({ ...request, market });
   if (!checked.ok) return { ok: false, ...checked.issues[0] };
+  if (request.contract.payoff !== 'vanilla') return severalAnswers();
   return solveImpliedVolatility(checked.request, premium, price);
 }
 
@@ -95,5 +114,17 @@ export function strikeForDelta(request: PricingRequest, delta: number): Solved {
   const contract = { ...request.contract, strike: request.market.spot };
   const checked = checkRequest({ ...request, contract });
   if (!checked.ok) return { ok: false, ...checked.issues[0] };
+  if (request.contract.payoff !== 'vanilla') return severalAnswers();
   return solveStrikeForDelta(checked.request, delta, price);
+}
+
+/** The value of a digital option rises and falls with the volatility, and so does its delta. */
+function severalAnswers(): PricingFailure {
+  return {
+    ok: false,
+    code: 'not-priced',
+    path: 'contract.payoff',
+    message:
+      'A digital option may have several answers to this, which is not solved: ask it of a vanilla option.',
+  };
 }

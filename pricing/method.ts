@@ -15,7 +15,8 @@ export type MethodSizes = Omit<MethodSettings, 'name'>;
  * the conformance suite (`tests/pricing/conformance.test.ts`) holds each entry to these points.
  *
  *  1. `prices` answers from the contract and the market alone, and never throws. Where it says
- *     no, `price` returns the failure `method-does-not-price`, with a sentence that names what.
+ *     no, a request gets the failure `method-does-not-price`, with a sentence that names what: for
+ *     the payoff at the engine's door (`index.ts`), for the exercise from `price`.
  *  2. `price` is given a request that `checkRequest` has accepted: finite numbers, positive spot,
  *     strike, expiry and volatility, settings within the caps. It does not check those again.
  *  3. `price` returns finite numbers or a failure value. Never NaN or Infinity, never a silent

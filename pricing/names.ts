@@ -15,6 +15,8 @@ export const payoffs = [
   'asian',
 ] as const;
 
+export const pricedPayoffs = ['vanilla', 'cash-or-nothing', 'asset-or-nothing'] as const;
+
 export const exercises = ['european', 'american', 'bermudan', 'perpetual'] as const;
 
 export const pricedExercises = ['european', 'american'] as const;

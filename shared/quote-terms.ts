@@ -3,7 +3,7 @@
  * price the very same numbers.
  */
 import Decimal from 'decimal.js';
-import { yearFraction, type PricingRequest } from '@/pricing/contract';
+import { yearFraction, type PricingRequest, type VanillaContract } from '@/pricing/contract';
 import type { QuoteTerms } from './contracts/quotes';
 import { instantInZone } from './dates';
 
@@ -20,7 +20,10 @@ export const expiryInstantMs = (expiryDate: string, desk: DeskClock): number =>
   instantInZone(expiryDate, desk.expiryCutoff, desk.timeZone);
 
 /** The request for these terms; an expiry that has passed gives one that the engine refuses. */
-export function pricingRequestOf(terms: PricedTerms, desk: DeskClock): PricingRequest {
+/** Desks trade vanilla options. */
+type VanillaRequest = PricingRequest & { contract: VanillaContract };
+
+export function pricingRequestOf(terms: PricedTerms, desk: DeskClock): VanillaRequest {
   const expiry = yearFraction(Date.parse(terms.pricedAt), expiryInstantMs(terms.expiryDate, desk));
   return {
     contract: {

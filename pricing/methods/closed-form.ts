@@ -1,5 +1,5 @@
 /**
- * The European vanilla option in closed form.
+ * European options in closed form: vanilla here, digital ones in `closed-form/digital.ts`.
  *
  *     call = A cdf(d1) - B cdf(d2),   put = B cdf(-d2) - A cdf(-d1),
  *     A = spot exp(-yield T),  B = strike exp(-rate T),  x = ln(A / B),  s = volatility sqrt(T),
@@ -22,6 +22,7 @@
  * combined as independent errors. It holds in at least 95 % of cases.
  */
 import type { Contract, Greeks, Market, PricingResult } from '@/pricing/contract';
+import { digitalValue } from '@/pricing/closed-form/digital';
 import { forwardGain, legsOf, type Legs } from '@/pricing/closed-form/legs';
 import { branchFor, outOfTheMoney } from '@/pricing/closed-form/out-of-the-money';
 import type { Method } from '@/pricing/method';
@@ -126,6 +127,14 @@ function price(contract: Contract, market: Market): PricingResult {
       message: 'The closed form prices European exercise only: choose another method.',
     };
   }
+  if (contract.payoff !== 'vanilla') {
+    return {
+      ok: true,
+      ...digitalValue(contract, market),
+      method: { name: 'closed-form' },
+      warnings: [],
+    };
+  }
   const terms = termsOf(contract, market);
   const value = valueOf(terms);
   return {
@@ -140,15 +149,15 @@ function price(contract: Contract, market: Market): PricingResult {
 }
 
 function prices(contract: Contract): boolean {
-  return contract.payoff === 'vanilla' && contract.exercise === 'european';
+  return contract.exercise === 'european';
 }
 
 export const closedForm: Method = {
   name: 'closed-form',
   label: 'Closed form',
   summary:
-    'The formula of Black, Scholes and Merton, with its variants for currency pairs and futures. ' +
-    'Exact to rounding, and the yardstick for the other routes; European exercise only.',
+    'The formula of Black, Scholes and Merton, with its variants for currency pairs, futures and ' +
+    'digital options. Exact to rounding, and the yardstick for the other routes; European exercise only.',
   theoreticalOrder: null,
   machinery: ['normal distribution', 'closed formula'],
   defaultSettings: {},

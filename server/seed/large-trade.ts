@@ -3,7 +3,7 @@
  * where the sizes of the first policy let the routes lie further apart than they admit, so that the
  * last run has a disagreement to explain.
  */
-import type { Contract, Market } from '@/pricing/contract';
+import type { Market, VanillaContract } from '@/pricing/contract';
 import { dateOfTenor, instantInZone } from '@/shared/dates';
 import { pricingRequestOf } from '@/shared/quote-terms';
 import { sequelize } from '../database';
@@ -31,7 +31,7 @@ const agreedDays = 18;
 const moneynesses = Array.from({ length: 61 }, (_, index) => 0.85 + 0.005 * index);
 
 async function disagreeingStrike(
-  contractOf: (strike: string) => Contract,
+  contractOf: (strike: string) => VanillaContract,
   { market, priceDecimals, contractSize, currency }: Listed['underlying'],
 ): Promise<string> {
   const tolerance = Number(moneyTolerances[currency]) / (Number(quantity) * Number(contractSize));

@@ -1,13 +1,19 @@
 /** Trades of a valuation run beside the event loop: both routes, and what they say together. */
 import os from 'node:os';
-import type { Contract, Market, MethodSettings, PricingResult, Verdict } from '@/pricing/contract';
+import type {
+  VanillaContract,
+  Market,
+  MethodSettings,
+  PricingResult,
+  Verdict,
+} from '@/pricing/contract';
 import { compareRoutes, price, priceRouteWithin } from '@/pricing/index';
 
 /** A route with its sizes, or as fine as a tolerance asks for. */
 export type RouteTask = MethodSettings | { name: MethodSettings['name']; within: number };
 
 export type ValuationTask = {
-  contract: Contract;
+  contract: VanillaContract;
   market: Market;
   tolerance: number;
   primary: RouteTask;
@@ -16,7 +22,7 @@ export type ValuationTask = {
 
 /** What was asked of one route, so that the same bits can be had again, and what it found. */
 export type ValuedRoute = {
-  request: { contract: Contract; market: Market; method: MethodSettings };
+  request: { contract: VanillaContract; market: Market; method: MethodSettings };
   result: PricingResult;
 };
 
